@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import { EngineErrors, type EngineError } from '../errors.ts';
+import { EngineErrors, type EngineError } from '#common/errors.ts';
 
 /** One problem of an input: where, as `node.parts[0].name`, and what is wrong in words. */
 export interface InputProblem {

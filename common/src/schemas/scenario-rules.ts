@@ -1,5 +1,5 @@
 import type { z } from 'zod';
-import type { Node, Part, Quantity, Routine } from '../engine/scenario/scenario.types.ts';
+import type { Node, Part, Quantity, Routine } from '#common/engine/scenario/scenario.types.ts';
 
 type Refinement = z.core.$RefinementCtx;
 type Path = (string | number)[];

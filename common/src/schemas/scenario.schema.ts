@@ -14,7 +14,7 @@ import type {
   Step,
   Supply,
   Target,
-} from '../engine/scenario/scenario.types.ts';
+} from '#common/engine/scenario/scenario.types.ts';
 import { LIMITS, SCHEMA_VERSION } from './limits.ts';
 import { checkNodeReferences, checkQuantityOrder, isIncreasing, isWholeMicroseconds } from './scenario-rules.ts';
 

@@ -1,5 +1,5 @@
 import { z } from 'zod';
-import type { Forecast } from '../../engine/forecast/forecast.types.ts';
+import type { Forecast } from '#common/engine/forecast/forecast.types.ts';
 
 const ledgerSchema = z.strictObject({
   side: z.enum(['rail', 'cell']),

@@ -1,0 +1,49 @@
+import react from '@vitejs/plugin-react';
+import { defineConfig } from 'vitest/config';
+
+const needsPostgres = ['test/support/postgres-setup.ts'];
+
+export default defineConfig({
+  test: {
+    maxWorkers: Number(process.env['TEST_WORKERS'] ?? 2),
+    allowOnly: false,
+    reporters: [['default', { summary: false }], './test/support/count-reporter.ts'],
+    coverage: { include: ['{backend,common,frontend}/src/**'], reportsDirectory: '.local/coverage' },
+    projects: [
+      {
+        test: {
+          name: 'unit',
+          environment: 'node',
+          include: ['{common,backend}/src/**/*.test.ts', 'test/lint/**/*.test.ts'],
+          testTimeout: 20_000,
+        },
+      },
+      {
+        plugins: [react()],
+        test: { name: 'ui', environment: 'happy-dom', include: ['frontend/src/**/*.test.{ts,tsx}'] },
+      },
+      { test: { name: 'truth', environment: 'node', include: ['test/truth/**/*.test.ts'], testTimeout: 60_000 } },
+      {
+        test: {
+          name: 'api',
+          environment: 'node',
+          include: ['test/api/**/*.test.ts'],
+          globalSetup: needsPostgres,
+          testTimeout: 30_000,
+          hookTimeout: 60_000,
+        },
+      },
+      {
+        test: {
+          name: 'browser',
+          environment: 'node',
+          include: ['test/browser/**/*.test.ts'],
+          globalSetup: [...needsPostgres, 'test/support/built-app-setup.ts'],
+          fileParallelism: false,
+          testTimeout: 120_000,
+          hookTimeout: 120_000,
+        },
+      },
+    ],
+  },
+});
