@@ -4,6 +4,16 @@ export type * from './node/node-program.types.ts';
 export type * from './forecast/forecast.types.ts';
 
 // link
+export { advertisingEvent, advertisingPacketS, type AdvertisingPhy } from './link/advertising-event.ts';
+export { chirpAirtimeS, isLowDataRate, type ChirpInput } from './link/chirp-airtime.ts';
+export { frameAirtimeS, type FrameAirtimeOptions } from './link/frame-airtime.ts';
+export { interframeSpaceS } from './link/interframe-space.ts';
+export { macHeader, type MacHeader, type MacHeaderInput } from './link/mac-header.ts';
+export { phyOf } from './link/phy-of.ts';
+export { phyPresets } from './link/phy.table.ts';
+export type { Phy, PhyConstant } from './link/phy.types.ts';
+export { serialTransferS } from './link/serial-transfer.ts';
+export { stepDuration, type StepDuration } from './link/step-duration.ts';
 // node
 export { exactDurationS, ledgerLines, type LedgerLine } from './node/ledger-lines.ts';
 // supply, climate
