@@ -34,7 +34,12 @@ const FRONTEND_PACKAGES = only(
 /** @type {Zone[]} */
 const ZONES = [
   { name: 'common/errors', files: /^common\/src\/errors\.ts$/, imports: NOTHING, packages: NOTHING },
-  { name: 'common/units', files: /^common\/src\/units\//, imports: only('common/errors'), packages: NOTHING },
+  {
+    name: 'common/units',
+    files: /^common\/src\/units\//,
+    imports: only('common/errors'),
+    packages: only('decimal\\.js'),
+  },
   {
     name: 'common/engine',
     files: /^common\/src\/engine\//,
