@@ -185,6 +185,9 @@ export const atEnd = (step) => void undo.push(step);
 
 let isEnding = false;
 
+/** Whether the command is on its way out, by Ctrl-C or an error. */
+export const hasBegunToEnd = () => isEnding;
+
 /** @param {number} code */
 async function end(code) {
   if (isEnding) return;

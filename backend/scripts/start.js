@@ -2,7 +2,7 @@ import path from 'node:path';
 import { build } from './build.js';
 import { ensurePackages } from './packages.js';
 import { chooseDatabase } from './postgres.js';
-import { atEnd, requireNode, runMain, say } from './project.js';
+import { atEnd, hasBegunToEnd, requireNode, runMain, say } from './project.js';
 import {
   choosePort,
   demoPassword,
@@ -41,6 +41,7 @@ async function main() {
   await server.ready;
   greet(server.origin, logFile, database.isOwn);
   const code = await server.ended;
+  if (hasBegunToEnd()) return 0;
   say(`The server ended by itself (code ${code}). Its log ends with:\n${lastLines(logFile, 20)}`);
   return 1;
 }

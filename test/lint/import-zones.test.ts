@@ -24,7 +24,7 @@ const linter = new Linter({ cwd: process.cwd() });
 const config: Linter.Config = {
   files: ['**/*.{ts,tsx}'],
   // The plugin's parser type is declared against its own copy of ESLint's types.
-  languageOptions: { parser: ts.parser as Linter.Parser },
+  languageOptions: { parser: ts.parser },
   linterOptions: { reportUnusedDisableDirectives: 'off' },
   plugins: { overwinter: { rules: { zones: importZones, reasons: reasonedExceptions } } },
   rules: { 'overwinter/zones': 'error', 'overwinter/reasons': 'error' },
