@@ -15,6 +15,12 @@ export type { Phy, PhyConstant } from './link/phy.types.ts';
 export { serialTransferS } from './link/serial-transfer.ts';
 export { stepDuration, type StepDuration } from './link/step-duration.ts';
 // node
+export { chargeLedger, exactDrawAt, type ChargeLedgerOptions } from './node/charge-ledger.ts';
+export { compileNode } from './node/compile-node.ts';
+export { drawAt, type DrawConditions } from './node/draw.ts';
+export { dutyShares, oversubscription, type DutyShare, type Oversubscription } from './node/duty-shares.ts';
 export { exactDurationS, ledgerLines, type LedgerLine } from './node/ledger-lines.ts';
+export { meanCurrentA } from './node/mean-current.ts';
+export { cyclesPerDay, exactCyclesPerDay, isOnAt, isOnInMonth, monthsOn } from './node/schedule-rate.ts';
 // supply, climate
 // forecast

@@ -38,6 +38,9 @@ const LINK_FIELDS = new Set(['preambleOctets', 'forwardErrorCorrection', 'shrOct
  */
 export function stepDuration(step: Step, nodeLink: LinkSettings = {}, path = ''): StepDuration {
   const { duration, repeats = 1 } = step;
+  // Most steps are typed and right: no path is put together for those, since this runs on each keystroke.
+  const isPlain = duration.kind === 'fixed' && Number.isInteger(repeats) && repeats >= 1 && duration.typical >= 0;
+  if (isPlain && duration.typical < Infinity) return whole(repeatedS(duration.typical, repeats), null);
   const prefix = path === '' ? '' : `${path}.`;
   requireNumber(repeats, { field: `${prefix}repeats`, min: 1, whole: true });
   const field = `${prefix}duration`;

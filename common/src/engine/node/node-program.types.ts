@@ -51,7 +51,7 @@ export interface Segment {
   activity: Activity;
   draw: Draw;
   /** Time per cycle, s, as a sum of typed terms kept apart so that decimal arithmetic stays exact. */
-  durationTermsS: number[];
+  durationTermsS: readonly number[];
 }
 
 export interface RoutineProgram {

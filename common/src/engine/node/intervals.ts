@@ -1,0 +1,73 @@
+import type { Step } from '../scenario/scenario.types.ts';
+import type { LaidWindow, Layout, Span } from './lay-out.ts';
+import { fromMicros } from './micros.ts';
+import type { Interval, Occupant } from './node-program.types.ts';
+
+/**
+ * Cuts a layout into intervals in which no part changes its activity.
+ *
+ * @param layout One cycle laid out.
+ * @param routineId Id of the routine, the beginning of each interval's id.
+ * @param steps Its steps.
+ * @returns Intervals in the order of time; those of kind `return` lie beyond the cycle.
+ * @example intervalsOf(layout, 'report', routine.steps)
+ */
+export function intervalsOf(layout: Layout, routineId: string, steps: readonly Step[]): Interval[] {
+  const spans = [...layout.spans].sort((a, b) => a.startUs - b.startUs);
+  const intervals: Interval[] = [];
+  const active: Span[] = [];
+  let next = 0;
+  for (const window of layout.windows) {
+    dropEnded(active, window.startUs);
+    for (let span = spans[next]; span && span.startUs < window.endUs; span = spans[++next]) active.push(span);
+    const step = steps[window.stepIndex];
+    if (step) pushWindow(intervals, { window, step, active, id: `${routineId}/${step.id}` });
+  }
+  return intervals;
+}
+
+/** Keeps, in place, the spans that have not ended. */
+function dropEnded(active: Span[], nowUs: number): void {
+  let kept = 0;
+  for (const span of active) if (span.endUs > nowUs) active[kept++] = span;
+  active.length = kept;
+}
+
+function pushWindow(
+  intervals: Interval[],
+  { window, step, active, id }: { window: LaidWindow; step: Step; active: readonly Span[]; id: string },
+): void {
+  const { kind } = window;
+  const base = kind === 'step' ? id : `${id}#${kind}`;
+  const edges = edgesWithin(window, active);
+  let startUs = window.startUs;
+  for (let index = 0; index <= edges.length; index++) {
+    const endUs = edges[index] ?? window.endUs;
+    intervals.push({
+      id: index === 0 ? base : `${base}${kind === 'step' ? '#' : ''}${index + 1}`,
+      kind,
+      stepId: step.id,
+      stepName: step.name,
+      startS: fromMicros(startUs),
+      durationS: edges.length === 0 ? window.durationS : fromMicros(endUs - startUs),
+      occupants: occupantsOf(active, startUs, endUs),
+    });
+    startUs = endUs;
+  }
+}
+
+function occupantsOf(active: readonly Span[], startUs: number, endUs: number): Occupant[] {
+  const occupants: Occupant[] = [];
+  for (const span of active) if (span.startUs <= startUs && span.endUs >= endUs) occupants.push(span.occupant);
+  return occupants;
+}
+
+/** Moments inside a window at which a part changes its activity, in order. */
+function edgesWithin({ startUs, endUs }: LaidWindow, active: readonly Span[]): number[] {
+  const edges: number[] = [];
+  for (const span of active) {
+    if (span.startUs > startUs && !edges.includes(span.startUs)) edges.push(span.startUs);
+    if (span.endUs < endUs && !edges.includes(span.endUs)) edges.push(span.endUs);
+  }
+  return edges.length > 1 ? edges.sort((a, b) => a - b) : edges;
+}
