@@ -24,6 +24,7 @@ import {
   UserError,
   atEnd,
   freePort,
+  goOn,
   isAlive,
   isHolderAlive,
   makeLocal,
@@ -265,8 +266,10 @@ async function createRole(at, isThrowAway) {
 
 /** @param {Place} at */
 function hasOtherUsers(at) {
-  const others = readdirSync(at.users).filter((name) => name !== String(process.pid));
-  return others.some((name) => isHolderAlive(path.join(at.users, name)));
+  const files = readdirSync(at.users).map((name) => path.join(at.users, name));
+  const gone = files.filter((file) => !isHolderAlive(file));
+  for (const file of gone) rmSync(file, { force: true });
+  return files.length > gone.length;
 }
 
 /** @param {Place} at @param {number} pid @param {boolean} isThrowAway */
@@ -322,7 +325,9 @@ export async function chooseDatabase() {
   const starting = startPostgres();
   // Registered before it runs: Ctrl-C in between stops it as well.
   atEnd(async () => (await starting.catch(() => null))?.stop());
-  return { url: (await starting).url, isOwn: true };
+  const { url } = await starting;
+  goOn();
+  return { url, isOwn: true };
 }
 
 /** A cluster for tests: its own folder, gone after `stop`. Removes what killed test runs left behind. */

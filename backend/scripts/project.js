@@ -188,11 +188,17 @@ let isEnding = false;
 /** Whether the command is on its way out, by Ctrl-C or an error. */
 export const hasBegunToEnd = () => isEnding;
 
+/** Leaves the main function when Ctrl-C came while it waited; called before it starts anything further. */
+export function goOn() {
+  if (isEnding) throw new UserError('Stopped.');
+}
+
 /** @param {number} code */
 async function end(code) {
   if (isEnding) return;
   isEnding = true;
-  for (const step of undo.splice(0).reverse()) {
+  // Steps may be added while others run.
+  for (let step = undo.pop(); step !== undefined; step = undo.pop()) {
     try {
       await step();
     } catch (error) {

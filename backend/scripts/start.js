@@ -2,7 +2,7 @@ import path from 'node:path';
 import { build } from './build.js';
 import { ensurePackages } from './packages.js';
 import { chooseDatabase } from './postgres.js';
-import { atEnd, hasBegunToEnd, requireNode, runMain, say } from './project.js';
+import { atEnd, goOn, hasBegunToEnd, requireNode, runMain, say } from './project.js';
 import {
   choosePort,
   demoPassword,
@@ -35,6 +35,7 @@ async function main() {
   const port = await choosePort(3000);
   const [hasBuilt, database] = await Promise.all([build(), chooseDatabase()]);
   if (hasBuilt) say('Built the pages and the server.');
+  goOn();
   const logFile = newLog();
   const server = startServer(serverEnvironment({ databaseUrl: database.url, port, withDemo: database.isOwn }), logFile);
   atEnd(server.stop);

@@ -3,7 +3,7 @@ import path from 'node:path';
 import { ensureChromium } from './debian.js';
 import { ensurePackages } from './packages.js';
 import { startThrowAwayPostgres } from './postgres.js';
-import { ROOT, atEnd, requireNode, runMain, say } from './project.js';
+import { ROOT, atEnd, goOn, requireNode, runMain, say } from './project.js';
 
 const QUICK = ['unit', 'truth', 'ui'];
 const SLOW = ['api', 'browser'];
@@ -109,6 +109,7 @@ async function main() {
     const starting = startThrowAwayPostgres();
     atEnd(async () => (await starting.catch(() => null))?.stop());
     env['TEST_DATABASE_URL'] = (await starting).baseUrl;
+    goOn();
   }
   // Two lanes for two cores; the suites that measure a real browser and database come alone.
   const isWhole = asked.length === 0;
