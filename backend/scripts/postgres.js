@@ -99,7 +99,7 @@ function prepare(dir, owner, mayBeForeign) {
 }
 
 /**
- * The folder of a cluster: in `.local`, or under /var/tmp when the project lies below a folder closed to `postgres`.
+ * The folder of a cluster: in `.local`, or under /var/lib (/var/tmp for tests) when the project lies below a folder closed to `postgres`.
  *
  * @param {string} name
  * @returns {Place}
@@ -130,10 +130,14 @@ function removeIfEmpty(dir) {
   }
 }
 
-/** @param {string} name */
+/**
+ * A folder outside the project that user postgres reaches. Not /var/tmp for data that stays: systems empty it by age.
+ *
+ * @param {string} name
+ */
 function elsewhere(name) {
   const key = createHash('sha256').update(ROOT).digest('hex').slice(0, 12);
-  return path.join('/var/tmp', `overwinter-${key}-${name}`);
+  return path.join(name.startsWith('test-') ? '/var/tmp' : '/var/lib', `overwinter-${key}-${name}`);
 }
 
 /** @param {Place} at @param {Kept} kept */
@@ -333,7 +337,7 @@ export async function chooseDatabase() {
 /** A cluster for tests: its own folder, gone after `stop`. Removes what killed test runs left behind. */
 export async function startThrowAwayPostgres() {
   makeLocal();
-  for (const folder of [LOCAL, path.dirname(elsewhere(''))]) {
+  for (const folder of [LOCAL, path.dirname(elsewhere('test-'))]) {
     for (const entry of readdirSync(folder).map((name) => path.join(folder, name))) {
       const pid = Number(/test-(\d+)$/.exec(entry)?.[1] ?? Number.NaN);
       const isOurs = entry === path.join(LOCAL, `test-${pid}`) || entry === elsewhere(`test-${pid}`);
