@@ -1,0 +1,22 @@
+import { keepPreviousData, useQuery } from '@tanstack/react-query';
+import { projectPageSchema } from '#common/schemas/api/projects.ts';
+import { api } from '#frontend/lib/api-client.ts';
+import { queryString } from '#frontend/lib/query-string.ts';
+
+export const PROJECTS_KEY = ['projects'];
+
+export interface ProjectListQuery {
+  page: number;
+  sort: string;
+  q: string;
+  archived: string;
+  pageSize?: number;
+}
+
+export function useProjects(query: ProjectListQuery) {
+  return useQuery({
+    queryKey: [...PROJECTS_KEY, 'list', query],
+    queryFn: ({ signal }) => api.get(`/projects${queryString({ ...query })}`, projectPageSchema, signal),
+    placeholderData: keepPreviousData,
+  });
+}
