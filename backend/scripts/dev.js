@@ -15,7 +15,13 @@ import { choosePort, demoPassword, serverEnvironment } from './server.js';
  */
 function runTool(tool, args, env) {
   const command = [path.join(ROOT, 'node_modules', tool), ...args];
-  const child = spawn(process.execPath, command, { cwd: ROOT, env, stdio: ['ignore', 'inherit', 'inherit'] });
+  // Detached: Ctrl-C reaches it once, through the step below, and not a second time from the terminal.
+  const child = spawn(process.execPath, command, {
+    cwd: ROOT,
+    env,
+    stdio: ['ignore', 'inherit', 'inherit'],
+    detached: true,
+  });
   const ended = new Promise((resolve) => child.once('exit', (code) => resolve(code ?? 1)));
   atEnd(async () => {
     child.kill('SIGTERM');
