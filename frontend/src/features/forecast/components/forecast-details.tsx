@@ -1,0 +1,24 @@
+import type { Forecast, Scenario } from '#common/engine/index.ts';
+import { ChargeLedger } from './charge-ledger.tsx';
+import { DutyCycles } from './duty-cycles.tsx';
+import { ForecastCurves } from './forecast-curves.tsx';
+
+/** What stands behind the forecast: ledger, curves, duty cycles. */
+export function ForecastDetails({ scenario, forecast }: { scenario: Scenario; forecast: Forecast | null }) {
+  return (
+    <section aria-labelledby="details-heading" className="space-y-12">
+      <h2 id="details-heading" className="sr-only">
+        Behind the forecast
+      </h2>
+      {forecast ? (
+        <>
+          <ChargeLedger scenario={scenario} forecast={forecast} />
+          {forecast.dekads.length > 0 && <ForecastCurves scenario={scenario} forecast={forecast} />}
+          <DutyCycles scenario={scenario} forecast={forecast} />
+        </>
+      ) : (
+        <p className="text-muted">Ledger and curves come with the first forecast.</p>
+      )}
+    </section>
+  );
+}

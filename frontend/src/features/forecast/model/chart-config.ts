@@ -1,0 +1,155 @@
+import type { ChartConfiguration, Plugin, ScaleOptionsByType } from 'chart.js';
+import { formatNumber } from '#common/units/format-quantity.ts';
+import type { ChartTheme } from './chart-theme.ts';
+import type { CurvePicture, TimeAxis } from './curves.ts';
+
+export type LineChart = ChartConfiguration<'line', { x: number; y: number }[]>;
+
+interface Picture {
+  picture: CurvePicture;
+  time: TimeAxis;
+  theme: ChartTheme;
+  /** Dekad that is read out, or null. */
+  pointed: () => number | null;
+}
+
+/** A chart of one picture: lines told apart by dashes, named at their ends, an axis for each quantity with its unit. */
+export function chartConfig({ picture, time, theme, pointed }: Picture): LineChart {
+  return {
+    type: 'line',
+    data: {
+      datasets: picture.curves.map((curve) => ({
+        label: curve.label,
+        data: curve.values.map((y, i) => ({ x: time.values[i] ?? 0, y })),
+        borderColor: theme.tones[curve.style.tone],
+        borderWidth: curve.style.widthPx,
+        borderDash: [...curve.style.dash],
+        pointRadius: 0,
+        tension: 0,
+      })),
+    },
+    options: {
+      animation: false,
+      responsive: true,
+      maintainAspectRatio: false,
+      parsing: false,
+      normalized: true,
+      events: [],
+      font: theme.font,
+      layout: { padding: { top: 6, right: picture.curves.length > 1 ? 94 : 10 } },
+      scales: {
+        x: { ...scale(theme, time.title), min: 0, max: time.max },
+        y: { ...scale(theme, picture.unit), min: picture.min, max: picture.max },
+      },
+    },
+    plugins: [endLabels(picture, theme), axisMarks(picture, theme), cursor(time, theme, pointed)],
+  };
+}
+
+type LinearScale = Pick<ScaleOptionsByType<'linear'>, never> & Record<string, unknown> & { type: 'linear' };
+
+function scale(theme: ChartTheme, title: string): LinearScale {
+  return {
+    type: 'linear',
+    title: { display: true, text: title, color: theme.tones.muted, font: theme.font, padding: 2 },
+    ticks: {
+      color: theme.tones.muted,
+      font: theme.font,
+      maxTicksLimit: 7,
+      includeBounds: false,
+      callback: (value: number | string) => formatNumber(Number(value)),
+    },
+    grid: { color: theme.grid, tickColor: theme.axis, tickLength: 4 },
+    border: { color: theme.axis },
+  };
+}
+
+/** Names of the lines at their right ends, moved apart where they would overlap. */
+function endLabels(picture: CurvePicture, theme: ChartTheme): Plugin<'line'> {
+  return {
+    id: 'end-labels',
+    afterDatasetsDraw(chart) {
+      if (picture.curves.length < 2) return;
+      const { ctx, chartArea } = chart;
+      const labels = picture.curves
+        .map((curve, i) => ({ curve, y: chart.getDatasetMeta(i).data.at(-1)?.y ?? chartArea.bottom }))
+        .sort((a, b) => a.y - b.y);
+      const lineHeight = theme.font.size + 3;
+      let nextFree = chartArea.top;
+      ctx.save();
+      ctx.font = `600 ${theme.font.size}px ${theme.font.family}`;
+      ctx.textBaseline = 'middle';
+      labels.forEach(({ curve, y }, i) => {
+        const room = chartArea.bottom - (labels.length - 1 - i) * lineHeight;
+        const at = Math.min(Math.max(y, nextFree), room);
+        nextFree = at + lineHeight;
+        ctx.fillStyle = theme.tones[curve.style.tone];
+        ctx.fillText(curve.label, chartArea.right + 8, at);
+      });
+      ctx.restore();
+    },
+  };
+}
+
+/** A break in a vertical axis that does not begin at zero, and a firm line at zero where values go below it. */
+function axisMarks(picture: CurvePicture, theme: ChartTheme): Plugin<'line'> {
+  return {
+    id: 'axis-marks',
+    beforeDatasetsDraw(chart) {
+      const { ctx, chartArea, scales } = chart;
+      ctx.save();
+      ctx.strokeStyle = theme.axis;
+      ctx.lineWidth = 1;
+      if (picture.startsAt !== null) {
+        ctx.fillStyle = theme.paper;
+        ctx.fillRect(chartArea.left - 5, chartArea.bottom - 14, 10, 6);
+        ctx.beginPath();
+        for (const offset of [8, 14]) {
+          ctx.moveTo(chartArea.left - 5, chartArea.bottom - offset + 2);
+          ctx.lineTo(chartArea.left + 5, chartArea.bottom - offset - 2);
+        }
+        ctx.stroke();
+      }
+      const zero = scales['y']?.getPixelForValue(0);
+      if (picture.min < 0 && zero !== undefined) {
+        ctx.beginPath();
+        ctx.moveTo(chartArea.left, zero);
+        ctx.lineTo(chartArea.right, zero);
+        ctx.stroke();
+      }
+      ctx.restore();
+    },
+  };
+}
+
+/** A line at the dekad that is read out, with a dot on each curve. */
+function cursor(time: TimeAxis, theme: ChartTheme, pointed: () => number | null): Plugin<'line'> {
+  return {
+    id: 'cursor',
+    afterDatasetsDraw(chart) {
+      const index = pointed();
+      const value = index === null ? undefined : time.values[index];
+      const x = value === undefined ? undefined : chart.scales['x']?.getPixelForValue(value);
+      if (index === null || x === undefined) return;
+      const { ctx, chartArea } = chart;
+      ctx.save();
+      ctx.strokeStyle = theme.tones.ink;
+      ctx.lineWidth = 1;
+      ctx.beginPath();
+      ctx.moveTo(x, chartArea.top);
+      ctx.lineTo(x, chartArea.bottom);
+      ctx.stroke();
+      ctx.fillStyle = theme.paper;
+      ctx.lineWidth = 2;
+      chart.data.datasets.forEach((_, i) => {
+        const y = chart.getDatasetMeta(i).data[index]?.y;
+        if (y === undefined) return;
+        ctx.beginPath();
+        ctx.arc(x, y, 3.5, 0, 2 * Math.PI);
+        ctx.fill();
+        ctx.stroke();
+      });
+      ctx.restore();
+    },
+  };
+}
