@@ -13,7 +13,7 @@ const CONTROL =
   'w-full border-0 border-b border-line bg-transparent px-0 py-1.5 text-ink outline-none transition-[border-color,box-shadow] ' +
   'hover:border-ink focus-visible:border-accent focus-visible:shadow-[0_1px_0_0_var(--accent)] rounded-none ' +
   'aria-invalid:border-rust aria-invalid:focus-visible:shadow-[0_1px_0_0_var(--rust)] ' +
-  'disabled:border-dashed disabled:text-muted read-only:border-dashed';
+  'disabled:border-dashed disabled:text-muted';
 
 type ControlProps = {
   id: string;

@@ -6,6 +6,8 @@ export interface ListParams {
   sort: string;
   q: string;
   archived: string;
+  /** Of the library: whose items. */
+  origin: string;
 }
 
 export type SetListParams = (change: Partial<ListParams>) => void;
@@ -19,6 +21,7 @@ export function useListParams(defaultSort: string): [ListParams, SetListParams] 
       sort: search.get('sort') ?? defaultSort,
       q: search.get('q') ?? '',
       archived: search.get('archived') === 'true' ? 'true' : 'false',
+      origin: search.get('origin') ?? 'all',
     }),
     [search, defaultSort],
   );
@@ -30,7 +33,11 @@ export function useListParams(defaultSort: string): [ListParams, SetListParams] 
           // Any other choice leads back to the first page, unless a page was what changed.
           for (const [key, value] of Object.entries({ page: 1, ...change })) {
             const isDefault =
-              value === '' || value === 1 || value === 'false' || (key === 'sort' && value === defaultSort);
+              value === '' ||
+              value === 1 ||
+              value === 'false' ||
+              value === 'all' ||
+              (key === 'sort' && value === defaultSort);
             if (isDefault) next.delete(key);
             else next.set(key, String(value));
           }

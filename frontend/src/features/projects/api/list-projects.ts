@@ -10,13 +10,12 @@ export interface ProjectListQuery {
   sort: string;
   q: string;
   archived: string;
-  pageSize?: number;
 }
 
-export function useProjects(query: ProjectListQuery) {
+export function useProjects({ page, sort, q, archived }: ProjectListQuery) {
   return useQuery({
-    queryKey: [...PROJECTS_KEY, 'list', query],
-    queryFn: ({ signal }) => api.get(`/projects${queryString({ ...query })}`, projectPageSchema, signal),
+    queryKey: [...PROJECTS_KEY, 'list', { page, sort, q, archived }],
+    queryFn: ({ signal }) => api.get(`/projects${queryString({ page, sort, q, archived })}`, projectPageSchema, signal),
     placeholderData: keepPreviousData,
   });
 }

@@ -13,11 +13,15 @@ export interface ScenarioListQuery {
   archived: string;
 }
 
-export function useScenarios(projectId: string, query: ScenarioListQuery) {
+export function useScenarios(projectId: string, { page, sort, q, archived }: ScenarioListQuery) {
   return useQuery({
-    queryKey: [...SCENARIOS_KEY, 'list', projectId, query],
+    queryKey: [...SCENARIOS_KEY, 'list', projectId, { page, sort, q, archived }],
     queryFn: ({ signal }) =>
-      api.get(`/projects/${projectId}/scenarios${queryString({ ...query })}`, scenarioPageSchema, signal),
+      api.get(
+        `/projects/${projectId}/scenarios${queryString({ page, sort, q, archived })}`,
+        scenarioPageSchema,
+        signal,
+      ),
     placeholderData: keepPreviousData,
   });
 }
