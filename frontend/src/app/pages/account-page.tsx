@@ -1,9 +1,11 @@
+import { useQueryClient } from '@tanstack/react-query';
+import type { Role } from '#common/schemas/api/common.ts';
 import { PageTitle } from '#frontend/components/page-title.tsx';
 import { Segmented } from '#frontend/components/segmented.tsx';
 import { ChangePasswordForm } from '#frontend/features/account/components/change-password-form.tsx';
+import { keepSession } from '#frontend/features/session/api/session.ts';
 import { useSession } from '#frontend/features/session/hooks/use-session.ts';
 import { useTheme } from '#frontend/hooks/use-theme.ts';
-import type { Role } from '#common/schemas/api/common.ts';
 
 const ROLE_WORDS: Record<Role, string> = {
   owner: 'owner: members and everything else',
@@ -20,6 +22,7 @@ const THEME_OPTIONS = [
 
 export function AccountPage() {
   const session = useSession();
+  const client = useQueryClient();
   const [theme, setTheme] = useTheme();
   if (!session) return null;
   const facts = [
@@ -54,7 +57,7 @@ export function AccountPage() {
         <section>
           <h2 className="text-lead font-light">Change the password</h2>
           <p className="mt-1 mb-6 max-w-sm text-muted">With the change, this account is signed out everywhere else.</p>
-          <ChangePasswordForm email={session.user.email} />
+          <ChangePasswordForm email={session.user.email} onRenewed={(renewed) => keepSession(client, renewed)} />
         </section>
       </div>
     </div>

@@ -1,9 +1,11 @@
 import { useMutation } from '@tanstack/react-query';
-import { z } from 'zod';
-import type { ChangePassword } from '#common/schemas/api/session.ts';
+import { sessionSchema, type ChangePassword, type Session } from '#common/schemas/api/session.ts';
 import { api } from '#frontend/lib/api-client.ts';
 
-/** Changes the password; every other session of this account ends with it. */
-export function useChangePassword() {
-  return useMutation({ mutationFn: (body: ChangePassword) => api.put('/session/password', body, z.unknown()) });
+/** Changes the password; the session is renewed and every other one of this account ends. */
+export function useChangePassword(onRenewed: (session: Session) => void) {
+  return useMutation({
+    mutationFn: (body: ChangePassword) => api.post('/session/password', body, sessionSchema),
+    onSuccess: onRenewed,
+  });
 }

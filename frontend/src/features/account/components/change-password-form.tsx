@@ -1,7 +1,7 @@
 import { zodResolver } from '@hookform/resolvers/zod';
 import { useState } from 'react';
 import { useForm } from 'react-hook-form';
-import { changePasswordSchema, type ChangePassword } from '#common/schemas/api/session.ts';
+import { changePasswordSchema, type ChangePassword, type Session } from '#common/schemas/api/session.ts';
 import { LIMITS } from '#common/schemas/limits.ts';
 import { Button } from '#frontend/components/button.tsx';
 import { TextField } from '#frontend/components/field.tsx';
@@ -11,8 +11,14 @@ import { ApiError } from '#frontend/lib/api-client.ts';
 import { applyProblems } from '#frontend/lib/form-errors.ts';
 import { useChangePassword } from '../api/change-password.ts';
 
-export function ChangePasswordForm({ email }: { email: string }) {
-  const change = useChangePassword();
+export interface ChangePasswordFormProps {
+  email: string;
+  /** The server gives a new session with the new password. */
+  onRenewed: (session: Session) => void;
+}
+
+export function ChangePasswordForm({ email, onRenewed }: ChangePasswordFormProps) {
+  const change = useChangePassword(onRenewed);
   const toast = useToast();
   const [problem, setProblem] = useState<string | null>(null);
   const { register, handleSubmit, setError, reset, formState } = useForm<ChangePassword>({

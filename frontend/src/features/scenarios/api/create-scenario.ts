@@ -15,7 +15,7 @@ export function useCreateScenario(projectId: string) {
 export function useImportScenario(projectId: string) {
   const refresh = refreshLists(useQueryClient());
   return useMutation({
-    mutationFn: (file: ScenarioFile) => api.post(`/projects/${projectId}/scenarios/import`, file, scenarioDetailSchema),
+    mutationFn: (file: ScenarioFile) => api.post(`/projects/${projectId}/import`, file, scenarioDetailSchema),
     onSuccess: refresh,
   });
 }

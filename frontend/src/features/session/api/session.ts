@@ -27,8 +27,8 @@ export function useSetup() {
 export function useSignOut() {
   const client = useQueryClient();
   return useMutation({
-    mutationFn: () => api.delete('/session', undefined, sessionSchema.optional()),
-    onSuccess: () => endSession(client),
+    mutationFn: () => api.delete('/session', undefined, sessionSchema),
+    onSuccess: (session) => startSession(client, session),
   });
 }
 
@@ -36,7 +36,10 @@ export function useSelectWorkspace() {
   const client = useQueryClient();
   return useMutation({
     mutationFn: (workspaceId: string) => api.put('/session/workspace', { workspaceId }, sessionSchema),
-    onSuccess: (session) => startSession(client, session),
+    onSuccess: async (session) => {
+      keepSession(client, session);
+      await client.resetQueries({ predicate: isNoSession });
+    },
   });
 }
 
@@ -56,14 +59,18 @@ async function fetchSession(): Promise<Session> {
   return session;
 }
 
-/** Nothing that one person or workspace has seen stays in the cache for the next. */
+/** Nothing that one person has seen stays in the cache for the next. */
 function startSession(client: QueryClient, session: Session): void {
-  client.clear();
+  keepSession(client, session);
+  client.removeQueries({ predicate: isNoSession });
+}
+
+/** Takes over a session that the server has renewed. */
+export function keepSession(client: QueryClient, session: Session): void {
   setCsrfToken(session.csrfToken);
   client.setQueryData(SESSION_KEY, session);
 }
 
-function endSession(client: QueryClient): void {
-  client.clear();
-  setCsrfToken(null);
+function isNoSession({ queryKey }: { queryKey: readonly unknown[] }): boolean {
+  return queryKey[0] !== SESSION_KEY[0];
 }
