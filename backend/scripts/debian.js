@@ -23,7 +23,7 @@ function install(packages, what, otherwise) {
   const list = packages.join(' ');
   if (!isRoot && spawnSync('sudo', ['-n', 'true'], { stdio: 'ignore' }).status !== 0) {
     throw new UserError(
-      `${what} is missing, and installing it needs root. Run this once, then try again:\n\n` +
+      `${what} missing; installing needs root. Run this once, then try again:\n\n` +
         `  sudo apt-get update && sudo apt-get install -y --no-install-recommends ${list}\n\n${otherwise}`,
     );
   }
@@ -62,6 +62,31 @@ function postgresFolders() {
     .sort((a, b) => b.major - a.major);
 }
 
+const POSTGRES = {
+  title: 'PostgreSQL',
+  packages: ['postgresql'],
+  otherwise: 'Or set DATABASE_URL to a PostgreSQL 15 or newer that runs already.',
+};
+const CHROMIUM = {
+  title: 'Chromium',
+  packages: ['chromium', 'fonts-dejavu-core'],
+  otherwise: 'Or set CHROMIUM_PATH to a Chromium that is there already.',
+};
+
+/** What the tests need, asked for in one go where several are missing. */
+export function ensureTestPrograms() {
+  const missing = [
+    ...(postgresFolders().length === 0 ? [POSTGRES] : []),
+    ...(chromiumPath() === undefined ? [CHROMIUM] : []),
+  ];
+  if (missing.length === 0) return;
+  install(
+    missing.flatMap(({ packages }) => packages),
+    missing.map(({ title }) => title).join(' and '),
+    missing.map(({ otherwise }) => otherwise).join('\n'),
+  );
+}
+
 /**
  * The folder of PostgreSQL's programs; installs Debian's server when there is none. The cluster that Debian's package
  * may set up for itself is neither used nor changed.
@@ -73,8 +98,9 @@ export function ensurePostgres(major) {
   const fitting = () => postgresFolders().find((folder) => major === null || folder.major === major)?.bin;
   const present = fitting();
   if (present !== undefined) return present;
-  const otherwise = 'Or set DATABASE_URL to a PostgreSQL 15 or newer that runs already.';
-  install([major === null ? 'postgresql' : `postgresql-${major}`], 'PostgreSQL', otherwise);
+  const packages = major === null ? POSTGRES.packages : [`postgresql-${major}`];
+  install(packages, POSTGRES.title, POSTGRES.otherwise);
+  say('Debian may have set up a cluster of its own on port 5432: it is neither used nor changed here.');
   const installed = fitting();
   if (installed === undefined)
     throw new UserError('PostgreSQL was installed, yet /usr/lib/postgresql holds no server.');
@@ -94,7 +120,7 @@ function chromiumPath() {
 export function ensureChromium() {
   const present = chromiumPath();
   if (present !== undefined) return present;
-  install(['chromium', 'fonts-dejavu-core'], 'Chromium', 'Or set CHROMIUM_PATH to a Chromium that is there already.');
+  install(CHROMIUM.packages, CHROMIUM.title, CHROMIUM.otherwise);
   const installed = chromiumPath();
   if (installed === undefined) throw new UserError('Chromium was installed, yet no `chromium` is on the PATH.');
   return installed;

@@ -1,5 +1,6 @@
 import path from 'node:path';
 import { build } from './build.js';
+import { ensurePostgres } from './debian.js';
 import { ensurePackages } from './packages.js';
 import { chooseDatabase } from './postgres.js';
 import { atEnd, goOn, hasBegunToEnd, requireNode, runMain, say } from './project.js';
@@ -30,6 +31,8 @@ function greet(origin, logFile, isOwn) {
 
 async function main() {
   requireNode();
+  // Before the packages: who must ask for it should not wait for them first.
+  if (!process.env['DATABASE_URL']) ensurePostgres(null);
   ensurePackages();
   await stopOrphans();
   const port = await choosePort(3000);

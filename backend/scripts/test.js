@@ -1,6 +1,6 @@
 import { spawn } from 'node:child_process';
 import path from 'node:path';
-import { ensureChromium } from './debian.js';
+import { ensureChromium, ensurePostgres, ensureTestPrograms } from './debian.js';
 import { ensurePackages } from './packages.js';
 import { startThrowAwayPostgres } from './postgres.js';
 import { ROOT, atEnd, goOn, requireNode, runMain, say } from './project.js';
@@ -99,12 +99,14 @@ async function main() {
   let total = { passed: 0, failed: 1 };
   atEnd(() => say(`${total.passed} passed, ${total.failed} failed`));
   requireNode();
-  ensurePackages();
   const quick = QUICK.filter(isWanted);
   const slow = SLOW.filter(isWanted);
   /** @type {NodeJS.ProcessEnv} */
   const env = isLong ? { LONG: '1' } : {};
+  if (slow.includes('browser')) ensureTestPrograms();
+  else if (slow.length > 0) ensurePostgres(null);
   if (slow.includes('browser')) env['CHROMIUM_PATH'] = ensureChromium();
+  ensurePackages();
   if (slow.length > 0) {
     const starting = startThrowAwayPostgres();
     atEnd(async () => (await starting.catch(() => null))?.stop());
