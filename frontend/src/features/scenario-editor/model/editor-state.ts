@@ -117,8 +117,18 @@ export function select(state: EditorState, selection: Partial<Selection>): Edito
   return { ...state, selection: { ...state.selection, ...selection }, typingIn: null };
 }
 
+/** Asks for the focus to go to a field, and chooses the part or the step that it belongs to. */
 export function focusField(state: EditorState, field: string): EditorState {
-  return { ...state, focus: requestFocus(state, field), typingIn: null };
+  const [area, list, id, steps, stepId] = field.split('.');
+  const ofPart = area === 'node' && list === 'parts' && id !== undefined ? { partId: id } : {};
+  const ofRoutine = area === 'node' && list === 'routines' && id !== undefined ? { routineId: id } : {};
+  const ofStep = steps === 'steps' && stepId !== undefined ? { stepId } : {};
+  return {
+    ...state,
+    selection: { ...state.selection, ...ofPart, ...ofRoutine, ...ofStep },
+    focus: requestFocus(state, field),
+    typingIn: null,
+  };
 }
 
 /** Ends the typing in a field: its next edit is an undo step of its own. */

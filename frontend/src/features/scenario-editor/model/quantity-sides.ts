@@ -14,6 +14,11 @@ export function withSide(quantity: Quantity, side: Side, value: number | undefin
   return { ...others, ...(value === undefined ? {} : { [side]: value }), provenance };
 }
 
+/** The figure with another typical value, or a new assumed one where there was none. */
+export function typicalOrNew(quantity: Quantity | undefined, typical: number): Quantity {
+  return quantity ? withSide(quantity, 'typical', typical) : { typical, provenance: { kind: 'assumed' } };
+}
+
 function provenanceOfChanged(before: Provenance | undefined): Provenance {
   if (!before) return { kind: 'assumed' };
   if (before.kind === 'assumed') return before;

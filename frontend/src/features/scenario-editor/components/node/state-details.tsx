@@ -4,7 +4,7 @@ import { useDocument, useEditorStore, useIsReadOnly } from '../../hooks/editor-c
 import { DOUBLING, POSITIVE_VOLTAGE, TEMPERATURE, VOLTAGE } from '../../model/figure-options.ts';
 import { updateState } from '../../model/operations/part-operations.ts';
 import { withOptional } from '../../model/operations/supply-operations.ts';
-import { withSide } from '../../model/quantity-sides.ts';
+import { typicalOrNew } from '../../model/quantity-sides.ts';
 import { FigureField } from '../fields/bound-fields.tsx';
 import { ChoiceField } from '../fields/choice-field.tsx';
 import { ProvenanceMark } from '../fields/provenance-mark.tsx';
@@ -91,7 +91,7 @@ function LowestVoltage({ part, state }: { part: Part; state: State }) {
           withOptional(
             before,
             'lowestVoltageV',
-            value === undefined ? undefined : withSide(before.lowestVoltageV ?? { typical: -1 }, 'typical', value),
+            value === undefined ? undefined : typicalOrNew(before.lowestVoltageV, value),
           ),
         )
       }

@@ -1,0 +1,200 @@
+import type { Duration, ExchangeDuration, PhyId, Routine, Step } from '#common/engine/scenario/scenario.types.ts';
+import { phyPresets } from '#common/engine/link/phy.table.ts';
+import { useDocument, useFieldProblem } from '../../hooks/editor-context.tsx';
+import { CLOCK, OCTETS, POSITIVE_NUMBER, STEP_TIME } from '../../model/figure-options.ts';
+import { durationOfKind, updateStep } from '../../model/operations/routine-operations.ts';
+import { withOptional } from '../../model/operations/supply-operations.ts';
+import { FigureField } from '../fields/bound-fields.tsx';
+import { ChoiceField } from '../fields/choice-field.tsx';
+import { QuantityField } from '../fields/quantity-fields.tsx';
+import { derivedText } from './duration-cell.tsx';
+
+type Kind = 'fixed' | 'airtime' | 'serial';
+
+const KINDS: readonly { value: Kind; label: string }[] = [
+  { value: 'fixed', label: 'typed' },
+  { value: 'airtime', label: 'airtime of a frame' },
+  { value: 'serial', label: 'serial transfer' },
+];
+
+const kindOfDuration = ({ kind }: Duration): Kind => (kind === 'exchange' ? 'airtime' : kind);
+
+interface DetailProps {
+  routine: Routine;
+  step: Step;
+}
+
+/** How long the selected step takes, and what that follows from. */
+export function StepDetail({ routine, step }: DetailProps) {
+  const index = routine.steps.indexOf(step);
+  const { duration } = step;
+  const field = `node.routines.${routine.id}.steps.${step.id}.duration`;
+  const change = useDurationChange(routine.id, step.id);
+  return (
+    <section aria-labelledby="step-detail" className="mt-5 border-l-2 border-hair pl-5">
+      <div className="flex flex-wrap items-baseline gap-x-3">
+        <h3 id="step-detail" className="font-extrabold">
+          {step.name}
+        </h3>
+        <p className="text-small text-muted">
+          step {index + 1} of {routine.steps.length}
+        </p>
+      </div>
+      <div className="mt-1 grid grid-cols-2 gap-x-6 sm:grid-cols-4">
+        <ChoiceField
+          field={`${field}.kind`}
+          label="Duration"
+          editLabel={`duration of ${step.name}`}
+          value={kindOfDuration(duration)}
+          choices={KINDS}
+          change={(document, kind) => change(() => durationOfKind(kind))(document)}
+        />
+        {duration.kind === 'fixed' && (
+          <div className="col-span-full sm:col-span-3">
+            <QuantityField
+              title="Takes"
+              field={field}
+              label={`${routine.name}, ${step.name}: duration`}
+              quantity={duration}
+              options={STEP_TIME}
+              change={(document, update) =>
+                change((before) => (before.kind === 'fixed' ? { ...update(before), kind: 'fixed' } : before))(document)
+              }
+            />
+          </div>
+        )}
+        {duration.kind === 'serial' && (
+          <SerialFields field={field} stepName={step.name} duration={duration} change={change} />
+        )}
+        {duration.kind === 'exchange' && (
+          <AirtimeFields field={field} stepName={step.name} duration={duration} change={change} />
+        )}
+      </div>
+      {duration.kind !== 'fixed' && <Derived field={field} step={step} />}
+    </section>
+  );
+}
+
+type ChangeDuration = ReturnType<typeof useDurationChange>;
+
+function useDurationChange(routineId: string, stepId: string) {
+  return (apply: (duration: Duration) => Duration) => (document: Parameters<typeof updateStep>[0]) =>
+    updateStep(document, routineId, stepId, (before) => ({ ...before, duration: apply(before.duration) }));
+}
+
+function Derived({ field, step }: { field: string; step: Step }) {
+  const link = useDocument((document) => document.node.link);
+  const problem = useFieldProblem(field);
+  const text = derivedText(step, link);
+  const times = step.repeats === undefined ? '' : `, ${step.repeats} times`;
+  return (
+    <p className={`min-h-6 ${text === null ? 'text-rust' : ''}`}>
+      {text === null ? (problem ?? 'The figures above do not give a duration yet.') : <strong>{text}</strong>}
+      {text !== null && <span className="text-muted">{times}, derived</span>}
+    </p>
+  );
+}
+
+interface FieldsProps<D extends Duration> {
+  field: string;
+  stepName: string;
+  duration: D;
+  change: ChangeDuration;
+}
+
+function SerialFields({ field, stepName, duration, change }: FieldsProps<Extract<Duration, { kind: 'serial' }>>) {
+  const rows = [
+    { key: 'octets', label: 'Octets', hint: 'an octet is a byte', options: OCTETS, isOptional: false },
+    { key: 'clockHz', label: 'Clock', hint: undefined, options: CLOCK, isOptional: false },
+    { key: 'bitsPerOctet', label: 'Bits an octet', hint: 'empty: 8', options: POSITIVE_NUMBER, isOptional: true },
+    { key: 'overheadPerOctetS', label: 'Pause an octet', hint: 'empty: none', options: STEP_TIME, isOptional: true },
+    { key: 'overheadS', label: 'Pause in all', hint: 'empty: none', options: STEP_TIME, isOptional: true },
+  ] as const;
+  return rows.map(({ key, label, hint, options, isOptional }) => (
+    <FigureField
+      key={key}
+      field={`${field}.${key}`}
+      label={label}
+      editLabel={`${label.toLowerCase()} of ${stepName}`}
+      value={duration[key]}
+      options={options}
+      isOptional={isOptional}
+      {...(hint === undefined ? {} : { hint })}
+      change={(document, value) =>
+        change((before) => {
+          if (before.kind !== 'serial') return before;
+          if (key === 'octets' || key === 'clockHz') return value === undefined ? before : { ...before, [key]: value };
+          return withOptional(before, key, value);
+        })(document)
+      }
+    />
+  ));
+}
+
+const PHYS: readonly { value: PhyId | 'node'; label: string }[] = [
+  { value: 'node', label: 'that of the node' },
+  ...Object.values(phyPresets).flatMap(({ id }) => (id === 'custom' ? [] : [{ value: id, label: id }])),
+];
+
+function AirtimeFields({ field, stepName, duration, change }: FieldsProps<ExchangeDuration>) {
+  const phy = duration.link?.phy;
+  const hasSize = 'psduOctets' in duration || 'payloadOctets' in duration || duration.pattern === 'frame';
+  return (
+    <>
+      <ChoiceField
+        field={`${field}.link.phy`}
+        label="PHY"
+        editLabel={`PHY of ${stepName}`}
+        value={typeof phy === 'string' ? phy : 'node'}
+        choices={PHYS}
+        change={(document, chosen) =>
+          change((before) =>
+            before.kind === 'exchange'
+              ? {
+                  ...before,
+                  link: withOptional(before.link ?? {}, 'phy', chosen === 'node' ? undefined : chosen),
+                }
+              : before,
+          )(document)
+        }
+      />
+      {hasSize && (
+        <>
+          <SizeField size="payloadOctets" label="Payload" {...{ field, stepName, duration, change }} />
+          <SizeField size="psduOctets" label="or whole frame (PSDU)" {...{ field, stepName, duration, change }} />
+        </>
+      )}
+    </>
+  );
+}
+
+interface SizeProps extends FieldsProps<ExchangeDuration> {
+  size: 'payloadOctets' | 'psduOctets';
+  label: string;
+}
+
+/** One of the two sizes gives the other: setting one takes the other away. */
+function SizeField({ size, label, field, stepName, duration, change }: SizeProps) {
+  const value: unknown = Reflect.get(duration, size);
+  return (
+    <FigureField
+      field={`${field}.${size}`}
+      label={label}
+      hint={size === 'payloadOctets' ? 'an octet is a byte' : 'FCS included'}
+      editLabel={`${label.toLowerCase()} of ${stepName}`}
+      value={typeof value === 'number' ? value : undefined}
+      options={OCTETS}
+      isOptional
+      change={(document, octets) => change((before) => withSize(before, size, octets))(document)}
+    />
+  );
+}
+
+function withSize(duration: Duration, size: SizeProps['size'], octets: number | undefined): Duration {
+  if (duration.kind !== 'exchange') return duration;
+  if (duration.pattern === 'frame' || duration.pattern === 'acknowledged' || duration.pattern === 'unacknowledged') {
+    const { payloadOctets: _payload, psduOctets: _psdu, ...others } = duration;
+    return { ...others, ...(octets === undefined ? {} : { [size]: octets }) };
+  }
+  return duration;
+}
