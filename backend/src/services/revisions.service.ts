@@ -1,7 +1,7 @@
 import type { Forecast } from '#common/engine/forecast/forecast.types.ts';
 import type { Page } from '#common/schemas/api/common.ts';
 import type { Change } from '#common/schemas/api/scenarios.ts';
-import { diffDocuments } from '#backend/domain/document-diff.ts';
+import { diffDocuments } from '#common/schemas/document-diff.ts';
 import { InvalidInputError, NotFoundError } from '#backend/domain/errors.ts';
 import type { Member } from '#backend/domain/principal.ts';
 import type {

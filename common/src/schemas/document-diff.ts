@@ -1,6 +1,6 @@
-import type { Change } from '#common/schemas/api/scenarios.ts';
+import type { Change } from './api/scenarios.ts';
 import type { Scenario } from '#common/engine/scenario/scenario.types.ts';
-import { joinPath } from '#common/schemas/problem.ts';
+import { joinPath } from './problem.ts';
 import { labelOf } from './document-labels.ts';
 
 type Path = readonly (string | number)[];
