@@ -124,6 +124,19 @@ function arbitraryRoutine(index: number, parts: readonly Part[]): fc.Arbitrary<R
     .map(({ schedule, steps }) => ({ id: `r${index}`, name: `Routine ${index}`, enabled: true, schedule, steps }));
 }
 
+/** All other parts keep the first one busy while they move, each in a state of its own choice. */
+function keepingFirstBusy([first, ...others]: Part[]): Part[] {
+  if (!first) return [];
+  return [
+    first,
+    ...others.map((part, index) => {
+      const stateId = first.states[index % first.states.length]?.id ?? first.restStateId;
+      const busy = { partId: first.id, stateId };
+      return { ...part, transitions: part.transitions.map((transition) => ({ ...transition, busy })) };
+    }),
+  ];
+}
+
 export interface NodeLimits {
   maxParts?: number;
   maxRoutines?: number;
@@ -136,13 +149,14 @@ export function arbitraryNode({ maxParts = 4, maxRoutines = 4 }: NodeLimits = {}
       partCount: fc.integer({ min: 1, max: maxParts }),
       routineCount: fc.integer({ min: 0, max: maxRoutines }),
       leakagesA: fc.array(arbitraryCurrentA, { maxLength: 2 }),
+      isFirstBusy: fc.boolean(),
     })
-    .chain(({ partCount, routineCount, leakagesA }) =>
+    .chain(({ partCount, routineCount, leakagesA, isFirstBusy }) =>
       fc.tuple(...Array.from({ length: partCount }, (_, index) => arbitraryPart(index))).chain((parts) =>
         fc
           .tuple(...Array.from({ length: routineCount }, (_, index) => arbitraryRoutine(index, parts)))
           .map((routines): Node => ({
-            parts,
+            parts: isFirstBusy ? keepingFirstBusy(parts) : parts,
             routines,
             leakages: leakagesA.map((currentA, index) => ({
               id: `l${index}`,

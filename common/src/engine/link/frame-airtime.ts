@@ -73,11 +73,14 @@ function constantOf(phy: Phy, name: 'shrOctets' | 'phrOctets', supplied: number 
   if (supplied !== undefined) return requireNumber(supplied, { field: name, min: 0, unit: 'octets' });
   const value = phy[name];
   if (value !== null) return value;
-  throw new InconsistentInputError(`No source gives ${name} of the PHY "${phy.id}"; supply ${name}.`, {
-    code: 'constant-unknown',
-    field: name,
-    value: null,
-    unit: 'octets',
-    expected: `${name} supplied by the caller`,
-  });
+  throw new InconsistentInputError(
+    `No source gives ${name} of the PHY "${phy.id}"; supply ${name}, or take a PHY of your own.`,
+    {
+      code: 'constant-unknown',
+      field: name,
+      value: null,
+      unit: 'octets',
+      expected: `${name} supplied by the caller`,
+    },
+  );
 }

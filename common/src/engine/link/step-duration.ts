@@ -21,7 +21,14 @@ const FRAME_FIELDS = new Set(
     ',',
   ),
 );
-const LINK_FIELDS = new Set(['preambleOctets', 'forwardErrorCorrection', 'shrOctets', 'phrOctets', 'link.phy']);
+/** Fields of the link settings; a header that the PHY leaves open is given by another PHY. */
+const LINK_FIELDS = new Map([
+  ['preambleOctets', 'preambleOctets'],
+  ['forwardErrorCorrection', 'forwardErrorCorrection'],
+  ['shrOctets', 'phy'],
+  ['phrOctets', 'phy'],
+  ['link.phy', 'phy'],
+]);
 
 /**
  * Mean duration of a step: typed, of a serial transfer, or the airtime of an exchange's main frame.
@@ -39,14 +46,14 @@ const LINK_FIELDS = new Set(['preambleOctets', 'forwardErrorCorrection', 'shrOct
 export function stepDuration(step: Step, nodeLink: LinkSettings = {}, path = ''): StepDuration {
   const { duration, repeats = 1 } = step;
   // Most steps are typed and right: no path is put together for those, since this runs on each keystroke.
-  const isPlain = duration.kind === 'fixed' && Number.isInteger(repeats) && repeats >= 1 && duration.typical >= 0;
-  if (isPlain && duration.typical < Infinity) return whole(repeatedS(duration.typical, repeats), null);
+  if (duration.kind === 'fixed' && isTime(duration.typical) && isCount(repeats)) {
+    return whole(repeatedS(duration.typical, repeats), null);
+  }
   const prefix = path === '' ? '' : `${path}.`;
   requireNumber(repeats, { field: `${prefix}repeats`, min: 1, whole: true });
   const field = `${prefix}duration`;
   if (duration.kind === 'fixed') {
-    const typicalS = requireNumber(duration.typical, { field: `${field}.typical`, min: 0, unit: 's' });
-    return whole(repeatedS(typicalS, repeats), null);
+    return whole(requireNumber(duration.typical, { field: `${field}.typical`, min: 0, unit: 's' }), null);
   }
   if (duration.kind === 'serial') {
     return rebased(field, undefined, () => whole(serialTransferS(duration) * repeats, null));
@@ -54,6 +61,14 @@ export function stepDuration(step: Step, nodeLink: LinkSettings = {}, path = '')
   const link = mergedLink(nodeLink, duration.link);
   const { airtimeS, notCounted } = rebased(field, duration.link, () => exchangeAirtime(duration, link));
   return whole(airtimeS * repeats, notCounted === null ? null : airtimeOnly(step.name, field, notCounted, duration));
+}
+
+function isTime(timeS: number): boolean {
+  return timeS >= 0 && timeS < Infinity;
+}
+
+function isCount(count: number): boolean {
+  return Number.isInteger(count) && count >= 1;
 }
 
 function whole(meanS: number, remark: NodeRemark | null): StepDuration {
@@ -99,6 +114,6 @@ function rebased<T>(path: string, stepLink: LinkSettings | undefined, compute: (
 function fieldPath(path: string, stepLink: LinkSettings | undefined, field: string): string {
   if (field === '') return path;
   if (FRAME_FIELDS.has(field)) return `${stepLink?.frame ? `${path}.link` : 'node.link'}.frame.${field}`;
-  if (LINK_FIELDS.has(field)) return `${stepLink ? `${path}.link` : 'node.link'}.${field.replace('link.', '')}`;
-  return `${path}.${field}`;
+  const linkField = LINK_FIELDS.get(field);
+  return linkField === undefined ? `${path}.${field}` : `${stepLink ? `${path}.link` : 'node.link'}.${linkField}`;
 }

@@ -19,7 +19,7 @@ export function addBusyParts(
   partById: ReadonlyMap<string, PartModel>,
   onElsewhere: (mover: PartModel, claim: BusyClaim) => void,
 ): void {
-  for (const claim of layout.claims) {
+  for (const claim of inOrder(layout.claims, parts)) {
     const { busy } = claim.hop;
     const part = busy && partById.get(busy.partId);
     const state = busy && part?.stateById.get(busy.stateId);
@@ -29,6 +29,12 @@ export function addBusyParts(
     if (mover && movesInTime && !isInState(layout, part, state, claim.startUs)) onElsewhere(mover, claim);
     layout.spans = withClaim(layout.spans, part, state, claim);
   }
+}
+
+/** The claim that begins first counts where two overlap; of two that begin together, that of the part whose id comes first. */
+function inOrder(claims: readonly BusyClaim[], parts: readonly PartModel[]): BusyClaim[] {
+  const idOf = ({ moverIndex }: BusyClaim): string => parts[moverIndex]?.part.id ?? '';
+  return [...claims].sort((a, b) => a.startUs - b.startUs || (idOf(a) < idOf(b) ? -1 : 1));
 }
 
 /** Whether a part is in a state just before a moment; resting is the state of no span. */

@@ -116,14 +116,7 @@ function checkSchedule(schedule: Schedule, path: string, report: NodeReport): vo
   if (schedule.kind === 'random') report.number(schedule.meanPerDay, `${path}.meanPerDay`, 'a day');
   if (schedule.kind === 'once') report.number(schedule.afterS, `${path}.afterS`, 's');
   if (schedule.kind === 'window') {
-    for (const field of ['fromHour', 'toHour'] as const) {
-      const hour = schedule[field];
-      if (hour >= 0 && hour <= 24) continue;
-      const expected = '0 to 24';
-      report.inconsistent('out-of-range', `${path}.${field}`, `${path}.${field} is ${hour}; allowed is ${expected}.`, {
-        value: hour,
-        expected,
-      });
-    }
+    report.number(schedule.fromHour, `${path}.fromHour`, 'h', { max: 24 });
+    report.number(schedule.toHour, `${path}.toHour`, 'h', { max: 24 });
   }
 }

@@ -4,6 +4,12 @@ import { fromMicros } from './micros.ts';
 import type { Interval, Occupant } from './node-program.types.ts';
 
 /**
+ * Edges closer than this are one, µs: derived durations are no whole microseconds, and a sliver between two roundings would
+ * show a sum of currents that never flows.
+ */
+const ROUNDING_US = 1e-3;
+
+/**
  * Cuts a layout into intervals in which no part changes its activity.
  *
  * @param layout One cycle laid out.
@@ -57,17 +63,25 @@ function pushWindow(
 }
 
 function occupantsOf(active: readonly Span[], startUs: number, endUs: number): Occupant[] {
+  const middleUs = (startUs + endUs) / 2;
   const occupants: Occupant[] = [];
-  for (const span of active) if (span.startUs <= startUs && span.endUs >= endUs) occupants.push(span.occupant);
+  for (const span of active) {
+    if (span.startUs < middleUs && span.endUs > middleUs) occupants.push(span.occupant);
+  }
   return occupants;
 }
 
-/** Moments inside a window at which a part changes its activity, in order. */
+/** Moments inside a window at which a part changes its activity, in order; those closer than a rounding are one. */
 function edgesWithin({ startUs, endUs }: LaidWindow, active: readonly Span[]): number[] {
   const edges: number[] = [];
+  const add = (edgeUs: number): void => {
+    if (edgeUs > startUs + ROUNDING_US && edgeUs < endUs - ROUNDING_US) edges.push(edgeUs);
+  };
   for (const span of active) {
-    if (span.startUs > startUs && !edges.includes(span.startUs)) edges.push(span.startUs);
-    if (span.endUs < endUs && !edges.includes(span.endUs)) edges.push(span.endUs);
+    add(span.startUs);
+    add(span.endUs);
   }
-  return edges.length > 1 ? edges.sort((a, b) => a - b) : edges;
+  if (edges.length < 2) return edges;
+  edges.sort((a, b) => a - b);
+  return edges.filter((edgeUs, index) => index === 0 || edgeUs > (edges[index - 1] ?? 0) + ROUNDING_US);
 }

@@ -123,31 +123,43 @@ function addWindow(layout: Layout, kind: LaidWindow['kind'], stepIndex: number, 
   if (endUs > startUs) layout.windows.push({ kind, stepIndex, startUs, endUs, durationS: fromMicros(endUs - startUs) });
 }
 
-function layMoves(input: LayOutInput, layout: Layout, { step, stepIndex, states }: At): void {
-  const { parts } = input;
+function layMoves(input: LayOutInput, layout: Layout, at: At): void {
+  const { stepIndex, states } = at;
+  const { paths, movesUs } = pathsInto(input, layout, at);
+  if (movesUs === 0) return;
+  const startUs = layout.cycleUs;
+  const endUs = startUs + movesUs;
+  for (const part of input.parts) {
+    const { hops, totalUs } = paths[part.index] ?? NO_MOVE;
+    const { isRest, occupant } = states[part.index] ?? part.rest;
+    const heldUs = movesUs - totalUs;
+    const heldEndUs = totalUs === 0 ? endUs : startUs + heldUs;
+    if (!isRest) {
+      const termsS = [fromMicros(heldUs)];
+      addSpan(layout, { occupant, startUs, endUs: heldEndUs, termsS, stepIndex, isHeld: true });
+    }
+    if (hops.length > 0) layHops(layout, { part, hops, startUs: heldEndUs, stepIndex });
+  }
+  addWindow(layout, 'move', stepIndex, endUs);
+  layout.cycleUs = endUs;
+}
+
+/** The way of each part into a step, and the time of the longest one. */
+function pathsInto(
+  input: LayOutInput,
+  layout: Layout,
+  { step, stepIndex, states }: At,
+): { paths: TransitionPath[]; movesUs: number } {
   const paths: TransitionPath[] = [];
   let movesUs = 0;
-  for (const part of parts) {
+  for (const part of input.parts) {
     const from = states[part.index] ?? part.rest;
     const to = step.named[part.index] ?? from;
     const path = from === to ? NO_MOVE : pathOrReport(input, layout, { part, from, to, stepIndex });
     if (path.totalUs > movesUs) movesUs = path.totalUs;
     paths.push(path);
   }
-  if (movesUs === 0) return;
-  const startUs = layout.cycleUs;
-  const endUs = startUs + movesUs;
-  for (const part of parts) {
-    const { hops, totalUs } = paths[part.index] ?? NO_MOVE;
-    const held = states[part.index] ?? part.rest;
-    if (!held.isRest) {
-      const termsS = [fromMicros(movesUs - totalUs)];
-      addSpan(layout, { occupant: held.occupant, startUs, endUs: endUs - totalUs, termsS, stepIndex, isHeld: true });
-    }
-    if (hops.length > 0) layHops(layout, { part, hops, startUs: endUs - totalUs, stepIndex });
-  }
-  addWindow(layout, 'move', stepIndex, endUs);
-  layout.cycleUs = endUs;
+  return { paths, movesUs };
 }
 
 function layStep(input: LayOutInput, layout: Layout, at: At, returning: (Returning | null)[]): void {

@@ -23,10 +23,11 @@ export class NodeReport {
     this.errors.push(new InconsistentInputError(message, { code, field, ...details }));
   }
 
-  /** Notes a number that is not finite or below its least value. */
-  number(value: number, field: string, unit: string, { min = 0, isAbove = false } = {}): void {
-    if (Number.isFinite(value) && (isAbove ? value > min : value >= min)) return;
-    const expected = `${isAbove ? `above ${min}` : `${min} or more`}${unit === '' ? '' : ` ${unit}`}`;
+  /** Notes a number that is not finite or outside its range. */
+  number(value: number, field: string, unit: string, { min = 0, max = Infinity, isAbove = false } = {}): void {
+    if (Number.isFinite(value) && value <= max && (isAbove ? value > min : value >= min)) return;
+    const least = isAbove ? `above ${min}` : `${min} or more`;
+    const expected = `${max === Infinity ? least : `${min} to ${max}`}${unit === '' ? '' : ` ${unit}`}`;
     const message = `${field} is ${value}; allowed is ${expected}.`;
     this.errors.push(new OutOfRangeError(message, { code: 'out-of-range', field, value, unit, expected }));
   }

@@ -1,0 +1,143 @@
+import { describe, expect, test } from 'vitest';
+import { InconsistentInputError, OutOfRangeError } from '#common/errors.ts';
+import { errorOf } from '#test/support/build-node.ts';
+import type { Duration, ExchangePattern, LinkSettings, Step } from '../scenario/scenario.types.ts';
+import { stepDuration } from './step-duration.ts';
+
+const step = (duration: Duration, repeats?: number): Step => ({
+  id: 'send',
+  name: 'Send',
+  states: {},
+  duration,
+  ...(repeats === undefined ? {} : { repeats }),
+});
+const exchange = (pattern: ExchangePattern, link?: LinkSettings): Step =>
+  step({ kind: 'exchange', ...pattern, ...(link ? { link } : {}) });
+const nodeLink: LinkSettings = { phy: 'oqpsk-2450' };
+const path = 'node.routines[0].steps[1]';
+
+describe('stepDuration: typed and serial', () => {
+  test('is exact for repeats of whole microseconds', () => {
+    expect(stepDuration(step({ kind: 'fixed', typical: 0.1 }, 3))).toEqual({ meanS: 0.3, termsS: [0.3], remark: null });
+  });
+
+  test('multiplies a serial transfer by the repeats', () => {
+    expect(stepDuration(step({ kind: 'serial', octets: 100, clockHz: 1e6 }, 2)).meanS).toBe(0.0016);
+  });
+
+  test.each([
+    [step({ kind: 'fixed', typical: -1 }), `${path}.duration.typical`],
+    [step({ kind: 'fixed', typical: NaN }), `${path}.duration.typical`],
+    [step({ kind: 'fixed', typical: 1 }, 0), `${path}.repeats`],
+    [step({ kind: 'serial', octets: 1, clockHz: 0 }), `${path}.duration.clockHz`],
+  ])('throws at the path of the figure that is out of range (%#)', (wrong, field) => {
+    const error = errorOf(OutOfRangeError, () => stepDuration(wrong, {}, path));
+    expect(error).toMatchObject({ code: 'out-of-range', field });
+  });
+});
+
+describe('stepDuration: exchange', () => {
+  test('is the airtime of the frame, unrounded', () => {
+    const { meanS, remark } = stepDuration(exchange({ pattern: 'frame', psduOctets: 5 }, { phy: 'sun-fsk-150' }));
+    expect(meanS).toBe((8 * 13) / 150_000);
+    expect(remark).toBeNull();
+  });
+
+  test('sizes the frame from payload and format, short addresses and an FCS of 2 by default', () => {
+    expect(stepDuration(exchange({ pattern: 'frame', payloadOctets: 20 }), nodeLink).meanS).toBe((6 + 31) * 32e-6);
+  });
+
+  test('takes an FCS of 4 octets on SUN FSK unless the format says otherwise', () => {
+    const sun: LinkSettings = { phy: 'sun-fsk-50' };
+    const octetsS = (octets: number) => (8 * octets) / 50_000;
+    expect(stepDuration(exchange({ pattern: 'frame', payloadOctets: 0 }), sun).meanS).toBe(octetsS(8 + 9 + 4));
+    const short: LinkSettings = { ...sun, frame: { fcsOctets: 2 } };
+    expect(stepDuration(exchange({ pattern: 'frame', payloadOctets: 0 }), short).meanS).toBe(octetsS(8 + 9 + 2));
+  });
+
+  test('lets the link of the step override that of the node field by field', () => {
+    const secured: LinkSettings = { ...nodeLink, frame: { securityLevel: 5, source: 'extended' } };
+    const own: LinkSettings = { frame: { source: 'short' } };
+    const { meanS } = stepDuration(exchange({ pattern: 'frame', payloadOctets: 20 }, own), secured);
+    expect(meanS).toBe((6 + 9 + 5 + 20 + 4 + 2) * 32e-6);
+  });
+
+  const partlyCounted: [ExchangePattern, number][] = [
+    [{ pattern: 'acknowledged', psduOctets: 50 }, 50],
+    [{ pattern: 'unacknowledged', psduOctets: 50 }, 50],
+    [{ pattern: 'listen-before-talk', psduOctets: 50, channels: 2, retuneS: 0.001 }, 50],
+    [{ pattern: 'poll', pendingProbability: { typical: 0.1 } }, 12],
+    [{ pattern: 'poll', dataRequestOctets: 18, pendingProbability: { typical: 0.1 } }, 18],
+    [{ pattern: 'slot', slotUse: 'transmit', psduOctets: 69 }, 69],
+    [{ pattern: 'sampled-sender', periodUnits: 100, psduOctets: 40 }, 40],
+  ];
+  test.each(partlyCounted)('counts the main frame of %o and remarks what is not counted', (pattern, octets) => {
+    const { meanS, remark } = stepDuration(exchange(pattern), nodeLink, path);
+    expect(meanS).toBe((6 + octets) * 32e-6);
+    expect(remark).toMatchObject({ code: 'link-airtime-only', path: `${path}.duration` });
+  });
+
+  test('computes a chirp frame with 8 preamble symbols, header and CRC, and remarks receive windows only', () => {
+    const chirp = {
+      pattern: 'chirp',
+      spreadingFactor: 7,
+      bandwidthHz: 125_000,
+      codingRate: 1,
+      payloadOctets: 10,
+    } as const;
+    expect(stepDuration(exchange(chirp))).toMatchObject({ meanS: 0.041216, remark: null });
+    const { remark } = stepDuration(exchange({ ...chirp, receiveWindows: [{ delayS: 1, openS: 0.03 }] }));
+    expect(remark?.code).toBe('link-airtime-only');
+  });
+
+  test('computes all packets of an advertising event and remarks scan responses only', () => {
+    const advertising = { pattern: 'advertising', advertisingPhy: '1M', dataOctets: 31, channels: 3 } as const;
+    expect(stepDuration(exchange(advertising))).toMatchObject({ meanS: 0.001128, remark: null });
+    expect(stepDuration(exchange({ ...advertising, scanResponse: true })).remark?.code).toBe('link-airtime-only');
+  });
+
+  const withoutFrame: ExchangePattern[] = [
+    { pattern: 'slot', slotUse: 'idle-listen' },
+    { pattern: 'sampled-listener', periodUnits: 100, sampleS: 0.0001 },
+    { pattern: 'beacon', beaconOrder: 6, superframeOrder: 4, beaconPsduOctets: 20 },
+    { pattern: 'guard', intervalS: 10 },
+  ];
+  test.each(withoutFrame)('throws for $pattern, which has no frame of its own', (pattern) => {
+    const error = errorOf(InconsistentInputError, () => stepDuration(exchange(pattern), nodeLink, path));
+    expect(error).toMatchObject({ code: 'no-frame', field: `${path}.duration` });
+    expect(error.message).toContain('type the duration');
+  });
+
+  test('throws without a PHY at the link that would have to give it', () => {
+    const frame: ExchangePattern = { pattern: 'frame', psduOctets: 5 };
+    const ofNode = errorOf(InconsistentInputError, () => stepDuration(exchange(frame), {}, path));
+    expect(ofNode).toMatchObject({ code: 'phy-missing', field: 'node.link.phy' });
+    const ofStep = errorOf(InconsistentInputError, () => stepDuration(exchange(frame, {}), {}, path));
+    expect(ofStep.field).toBe(`${path}.duration.link.phy`);
+  });
+
+  test('throws without a frame size', () => {
+    const error = errorOf(InconsistentInputError, () => stepDuration(exchange({ pattern: 'frame' }), nodeLink, path));
+    expect(error).toMatchObject({ code: 'frame-size-missing', field: `${path}.duration.payloadOctets` });
+  });
+
+  test('throws at the payload of a frame that is too long', () => {
+    const tooLong = exchange({ pattern: 'frame', payloadOctets: 200 });
+    const error = errorOf(OutOfRangeError, () => stepDuration(tooLong, nodeLink, path));
+    expect(error).toMatchObject({ code: 'frame-too-long', field: `${path}.duration.payloadOctets` });
+  });
+
+  test('throws at the frame format for what its version does not know', () => {
+    const link: LinkSettings = { ...nodeLink, frame: { sequenceNumber: false } };
+    const run = () => stepDuration(exchange({ pattern: 'frame', payloadOctets: 1 }), link, path);
+    expect(errorOf(InconsistentInputError, run).field).toBe('node.link.frame.sequenceNumber');
+  });
+
+  test('throws for MSK, whose synchronisation header no source gives', () => {
+    const run = () => stepDuration(exchange({ pattern: 'frame', psduOctets: 5 }), { phy: 'msk-2450' }, path);
+    expect(errorOf(InconsistentInputError, run)).toMatchObject({
+      code: 'constant-unknown',
+      field: 'node.link.phy',
+    });
+  });
+});
