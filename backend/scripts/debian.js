@@ -23,7 +23,7 @@ function install(packages, what, otherwise) {
   const list = packages.join(' ');
   if (!isRoot && spawnSync('sudo', ['-n', 'true'], { stdio: 'ignore' }).status !== 0) {
     throw new UserError(
-      `${what} missing; installing needs root. Run this once, then try again:\n\n` +
+      `Missing: ${what}. Installing needs root. Run this once, then try again:\n\n` +
         `  sudo apt-get update && sudo apt-get install -y --no-install-recommends ${list}\n\n${otherwise}`,
     );
   }
@@ -75,8 +75,9 @@ const CHROMIUM = {
 
 /** What the tests need, asked for in one go where several are missing. */
 export function ensureTestPrograms() {
+  const hasServer = process.env['TEST_DATABASE_URL'] !== undefined || postgresFolders().length > 0;
   const missing = [
-    ...(postgresFolders().length === 0 ? [POSTGRES] : []),
+    ...(hasServer ? [] : [{ ...POSTGRES, otherwise: POSTGRES.otherwise.replace('DATABASE', 'TEST_DATABASE') }]),
     ...(chromiumPath() === undefined ? [CHROMIUM] : []),
   ];
   if (missing.length === 0) return;

@@ -101,13 +101,14 @@ async function main() {
   requireNode();
   const quick = QUICK.filter(isWanted);
   const slow = SLOW.filter(isWanted);
+  const needsCluster = slow.length > 0 && process.env['TEST_DATABASE_URL'] === undefined;
   /** @type {NodeJS.ProcessEnv} */
   const env = isLong ? { LONG: '1' } : {};
   if (slow.includes('browser')) ensureTestPrograms();
-  else if (slow.length > 0) ensurePostgres(null);
+  else if (needsCluster) ensurePostgres(null);
   if (slow.includes('browser')) env['CHROMIUM_PATH'] = ensureChromium();
   ensurePackages();
-  if (slow.length > 0) {
+  if (needsCluster) {
     const starting = startThrowAwayPostgres();
     atEnd(async () => (await starting.catch(() => null))?.stop());
     env['TEST_DATABASE_URL'] = (await starting).baseUrl;

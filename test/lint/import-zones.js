@@ -84,7 +84,7 @@ const ZONES = [
   },
   {
     name: 'backend/compose',
-    files: /^backend\/src\/(compose|main)\.ts$/,
+    files: /^backend\/src\/(compose|main|server)\.ts$/,
     imports: only('common/.*', 'backend/.*'),
     packages: allBut(BROWSER_ONLY, DEVELOPMENT),
   },
@@ -175,7 +175,7 @@ export function importProblem(importer, rawSource) {
   if (to === undefined) return `${from.name} imports '${source}', which lies in no zone.`;
   if (to.name === from.name) return null;
   if (!from.imports.test(to.name)) return `${from.name} never imports ${to.name}.`;
-  return source.startsWith('.') ? 'Cross a zone through its alias only.' : null;
+  return source.startsWith('../') ? 'Cross a zone through its alias only.' : null;
 }
 
 /** @type {import('eslint').Rule.RuleModule} */
