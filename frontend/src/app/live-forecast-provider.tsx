@@ -1,0 +1,40 @@
+import { createContext, use, useDeferredValue, useMemo, type ReactNode } from 'react';
+import type { InputProblem } from '#common/schemas/problem.ts';
+import { useLiveForecast } from '#frontend/features/forecast/hooks/use-live-forecast.ts';
+import { NO_FORECAST, type LiveForecastState } from '#frontend/features/forecast/model/live-forecast.ts';
+import { ProblemProvider, useEditorState } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import { useFieldProblems } from '#frontend/features/scenario-editor/hooks/use-field-problems.ts';
+
+const LiveForecastContext = createContext<LiveForecastState>(NO_FORECAST);
+
+interface LiveForecastProviderProps {
+  /** Problems that the server found when the document was saved. */
+  serverProblems: readonly InputProblem[];
+  children: ReactNode;
+}
+
+/**
+ * Computes the forecast of the document in the editor, once for everything on the page that shows it, and tells every field
+ * of the editor what the engine says about it. What is inside renders only where it reads one of the two.
+ */
+export function LiveForecastProvider({ serverProblems, children }: LiveForecastProviderProps) {
+  const document = useEditorState((state) => state.document);
+  const live = useLiveForecast(document);
+  const problems = useMemo(() => [...live.problems, ...serverProblems], [live.problems, serverProblems]);
+  const fields = useFieldProblems(problems);
+  return (
+    <LiveForecastContext value={live}>
+      <ProblemProvider problems={fields}>{children}</ProblemProvider>
+    </LiveForecastContext>
+  );
+}
+
+/** The forecast at hand; a keystroke does not wait for the pictures made of it. */
+export function useForecastOnPage(): LiveForecastState {
+  return useDeferredValue(use(LiveForecastContext));
+}
+
+/** The engine's complaints about the present document, at once. */
+export function useForecastProblems(): InputProblem[] {
+  return use(LiveForecastContext).problems;
+}
