@@ -48,12 +48,14 @@ export function AccountMenu({ session }: { session: SignedIn }) {
   ];
   return (
     <Menu
-      label={`Account of ${session.user.name}, workspace ${session.workspace.name}`}
+      label="Account"
+      isButtonNamed
       items={items}
       buttonClassName="flex min-h-9 items-center gap-2 text-ink hover:underline underline-offset-4"
       button={
         <>
-          <span className="max-w-44 truncate max-sm:hidden">{session.workspace.name}</span>
+          <span className="sr-only">Account of {session.user.name},</span>
+          <span className="max-w-44 truncate max-sm:sr-only">{session.workspace.name}</span>
           <span
             aria-hidden="true"
             className="inline-flex size-8 items-center justify-center rounded-full bg-accent-soft text-small font-semibold"

@@ -26,7 +26,7 @@ export function AppFrame() {
       >
         Skip to the page
       </a>
-      <header className="no-print border-b border-hair">
+      <header className="no-print">
         <div className="page flex min-h-16 flex-wrap items-center gap-x-6 gap-y-1 py-2">
           <Link to="/projects" className="flex items-center gap-3 text-ink">
             <Mark className="size-8 text-accent" />
@@ -55,12 +55,12 @@ export function AppFrame() {
           )}
         </div>
         {/* A page on its way: a line that grows, in a slot that is always there. */}
-        <div aria-hidden="true" className="h-px">
+        <div aria-hidden="true" className="h-px bg-hair">
           {navigation.state === 'loading' && <div className="h-px w-1/3 animate-pulse bg-accent" />}
         </div>
+        <OfflineNotice />
+        {session?.workspace.isDemo === true && <DemoNotice />}
       </header>
-      <OfflineNotice />
-      {session?.workspace.isDemo === true && <DemoNotice />}
       <main id="main" tabIndex={-1} className="pb-24">
         <Outlet />
       </main>

@@ -12,8 +12,10 @@ export interface MenuItem {
 }
 
 export interface MenuProps {
-  /** What the button is called when its content is a sign. */
+  /** What the menu is called, and its button too unless its own words do. */
   label: string;
+  /** The button's content says enough by itself. */
+  isButtonNamed?: boolean;
   button: ReactNode;
   items: readonly MenuItem[];
   buttonClassName?: string;
@@ -22,7 +24,7 @@ export interface MenuProps {
 }
 
 /** Menu button after the ARIA pattern: arrow keys, Home, End, first letter, Escape. */
-export function Menu({ label, button, items, heading, buttonClassName = '' }: MenuProps) {
+export function Menu({ label, button, items, heading, isButtonNamed = false, buttonClassName = '' }: MenuProps) {
   const [isOpen, setOpen] = useState(false);
   const rootRef = useRef<HTMLDivElement>(null);
   const buttonRef = useRef<HTMLButtonElement>(null);
@@ -54,7 +56,7 @@ export function Menu({ label, button, items, heading, buttonClassName = '' }: Me
       <button
         ref={buttonRef}
         type="button"
-        aria-label={label}
+        aria-label={isButtonNamed ? undefined : label}
         aria-haspopup="menu"
         aria-expanded={isOpen}
         aria-controls={isOpen ? id : undefined}

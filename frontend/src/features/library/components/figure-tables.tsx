@@ -22,7 +22,7 @@ export function FigureRows({ caption, rows }: { caption: string; rows: readonly 
             <th scope="row" className="pr-5 font-normal md:w-[32%]">
               {row.label}
             </th>
-            <td className="pr-5 whitespace-nowrap tabular-nums md:w-[28%]">
+            <td className="whitespace-nowrap md:pr-5 tabular-nums md:w-[28%]">
               <strong className="font-extrabold">{row.value}</strong>
               {row.range !== null && <span className="ml-2 text-small text-muted">{row.range}</span>}
             </td>

@@ -64,8 +64,13 @@ function stateColumns(part: Part): Column<State>[] {
       key: 'typical',
       header: 'Typical',
       isNumber: true,
-      className: 'whitespace-nowrap font-extrabold',
-      cell: (state) => formatCurrent(state.current.typical),
+      className: 'whitespace-nowrap',
+      cell: (state) => (
+        <>
+          <strong className="font-extrabold">{formatCurrent(state.current.typical)}</strong>
+          <span className="block text-small text-muted sm:hidden">{rangeOf(state.current, 'current')}</span>
+        </>
+      ),
     },
     {
       key: 'max',

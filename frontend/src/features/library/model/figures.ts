@@ -1,7 +1,7 @@
 import { CATALOGUE_CELLS } from '#common/catalogue/cells.ts';
 import type { Cell, Provenance, Quantity, Table } from '#common/engine/scenario/scenario.types.ts';
 import type { Dimension } from '#common/units/dimensions.table.ts';
-import { formatLifeYears } from '#common/units/format-duration.ts';
+import { formatDuration } from '#common/units/format-duration.ts';
 import {
   formatChargeMah,
   formatNumber,
@@ -90,7 +90,7 @@ export function cellFigures(cell: Cell): FigureRow[] {
       'selfDischarge.q10',
       loss.q10 === undefined ? undefined : `× ${formatNumber(loss.q10)}`,
     ),
-    ...plain('Shelf life', 'shelfLifeS', cell.shelfLifeS === undefined ? undefined : formatLifeYears(cell.shelfLifeS)),
+    ...plain('Shelf life', 'shelfLifeS', cell.shelfLifeS === undefined ? undefined : formatDuration(cell.shelfLifeS)),
     ...plain('Continuous current, at most', 'limits.continuousA', shown(limits?.continuousA, 'current')),
     ...plain('Pulse current, at most', 'limits.pulseA', shown(limits?.pulseA, 'current')),
     ...plain('Used between', 'limits.lowestC', temperatureRange(limits)),

@@ -2,6 +2,7 @@ import { zodResolver } from '@hookform/resolvers/zod';
 import { useState } from 'react';
 import { useForm } from 'react-hook-form';
 import { z } from 'zod';
+import { scenarioTemplates } from '#common/catalogue/templates.ts';
 import { nameSchema } from '#common/schemas/api/common.ts';
 import type { ScenarioDetail } from '#common/schemas/api/scenarios.ts';
 import { Button } from '#frontend/components/button.tsx';
@@ -10,7 +11,6 @@ import { TextField } from '#frontend/components/field.tsx';
 import { FormError } from '#frontend/components/states.tsx';
 import { applyProblems } from '#frontend/lib/form-errors.ts';
 import { useCreateScenario } from '../api/create-scenario.ts';
-import { starts } from '../model/starts.ts';
 
 const formSchema = z.object({ name: nameSchema, startId: z.string() });
 type Form = z.infer<typeof formSchema>;
@@ -23,7 +23,7 @@ export interface CreateScenarioDialogProps {
 
 /** Asks for a name and what to begin with: empty or one of the templates. */
 export function CreateScenarioDialog({ projectId, onClose, onCreated }: CreateScenarioDialogProps) {
-  const [choices] = useState(starts);
+  const [choices] = useState(scenarioTemplates);
   const create = useCreateScenario(projectId);
   const [problem, setProblem] = useState<string | null>(null);
   const { register, handleSubmit, setError, formState } = useForm<Form>({

@@ -6,7 +6,7 @@ export function ForecastShort({ forecast }: { forecast: ForecastSummary | null }
   const { before, strong, after, target } = forecastWords(forecast);
   return (
     <span className="block">
-      <span className="font-light">
+      <span className="text-lg font-light">
         {before}
         <strong className="font-extrabold">{strong}</strong>
         {after}

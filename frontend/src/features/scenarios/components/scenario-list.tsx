@@ -37,7 +37,7 @@ function columns(canEdit: boolean, acts: ScenarioActs): Column<ScenarioSummary>[
       sortBy: 'life',
       sortsDescendingFirst: true,
       from: 'md',
-      className: 'w-[24rem]',
+      className: 'w-[27rem]',
       cell: (scenario) => <ForecastShort forecast={scenario.forecast} />,
     },
     {

@@ -1,5 +1,5 @@
 import type { ForecastSummary } from '#common/schemas/api/scenarios.ts';
-import { formatLifeYears, monthName } from '#common/units/format-duration.ts';
+import { formatDuration, formatLifeYears, monthName } from '#common/units/format-duration.ts';
 
 export interface ForecastWords {
   /** Light words, then the bold ones, then light ones again. */
@@ -36,6 +36,6 @@ function endWords({ outcome, endMonth }: ForecastSummary): string {
 
 function targetWords({ outcome, lifeS, targetLifeS }: ForecastSummary): ForecastWords['target'] {
   const isMet = outcome === 'outlives-horizon' || (lifeS !== null && lifeS >= targetLifeS);
-  const target = formatLifeYears(targetLifeS);
+  const target = formatDuration(targetLifeS);
   return { isMet, text: isMet ? `meets the target of ${target}` : `misses the target of ${target}` };
 }
