@@ -272,8 +272,8 @@ export function pictureForecast(change: Partial<Forecast> = {}): Forecast {
     startingChargeC: 3_600,
     outages: [],
     lastReportS: lifeS,
-    meanCurrentA: 14.8e-6,
-    chargePerDayC: 14.8e-6 * DAY_S,
+    meanCurrentA: 13.6e-6,
+    chargePerDayC: 13.6e-6 * DAY_S,
     dutyCycles: [
       { partId: 'radio', stateId: 'r-sleep', fromStateId: null, share: 0.999996, meanCurrentA: 0.4e-6 },
       { partId: 'radio', stateId: 'r-tx', fromStateId: null, share: 1.46e-6, meanCurrentA: 2.07e-8 },

@@ -1,6 +1,12 @@
 import { useMemo } from 'react';
 import type { Forecast, Scenario } from '#common/engine/index.ts';
-import { groupCautions, HARM_CAUTION, STANDING_CAUTION, unsourcedFigures, type CautionGroup } from '../model/caution-groups.ts';
+import {
+  groupCautions,
+  HARM_CAUTION,
+  STANDING_CAUTION,
+  unsourcedFigures,
+  type CautionGroup,
+} from '../model/caution-groups.ts';
 
 /** What to mind about this forecast, and what holds for every one. */
 export function Cautions({ scenario, forecast }: { scenario: Scenario; forecast: Forecast | null }) {

@@ -63,8 +63,9 @@ export function ChargeLedger({ scenario, forecast }: Props) {
       <details className="text-small text-muted">
         <summary className="hover:text-ink w-fit">Exact total</summary>
         <p className="mt-1 break-all">
-          {view.totalExactC} C {kept.ledger.periodS === YEAR_S ? 'in a mean year' : `in ${formatDuration(kept.ledger.periodS)}`}, the
-          sum of {kept.ledger.entries.length} entries to the last digit.
+          {view.totalExactC} C{' '}
+          {kept.ledger.periodS === YEAR_S ? 'in a mean year' : `in ${formatDuration(kept.ledger.periodS)}`}, the sum of{' '}
+          {kept.ledger.entries.length} entries to the last digit.
         </p>
       </details>
     </section>
@@ -120,7 +121,10 @@ function Line({ row, largestC, isChild = false, isOpen = false, onToggle }: Line
         {onToggle ? (
           <button type="button" aria-expanded={isOpen} onClick={onToggle} className="group text-left hover:text-accent">
             {row.what}
-            <span aria-hidden="true" className={`text-muted ml-1.5 inline-block ${isOpen ? 'rotate-90' : ''}`}>
+            <span
+              aria-hidden="true"
+              className={`text-muted ml-2 inline-block text-[1.15em] leading-none ${isOpen ? 'rotate-90' : ''}`}
+            >
               ›
             </span>
           </button>

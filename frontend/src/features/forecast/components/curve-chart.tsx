@@ -2,7 +2,7 @@ import { Chart, LinearScale, LineController, LineElement, PointElement } from 'c
 import { useEffect, useRef, type KeyboardEvent, type PointerEvent } from 'react';
 import type { DekadPoint } from '#common/engine/index.ts';
 import { useThemeKey } from '../hooks/use-theme-key.ts';
-import { chartConfig } from '../model/chart-config.ts';
+import { chartConfig, refreshChart, type ChartContent } from '../model/chart-config.ts';
 import { readChartTheme } from '../model/chart-theme.ts';
 import { dekadInWords, valuesInWords, type CurvePicture, type TimeAxis } from '../model/curves.ts';
 
@@ -23,7 +23,7 @@ interface Props {
 export function CurveChart({ picture, time, dekads, pointed, onPoint }: Props) {
   const canvas = useRef<HTMLCanvasElement>(null);
   const chart = useRef<Chart<'line', { x: number; y: number }[]> | null>(null);
-  const latest = useRef(pointed);
+  const content = useRef<ChartContent>({ picture, time, pointed });
   const themeKey = useThemeKey();
   const last = dekads.length - 1;
   const shown = Math.min(pointed ?? last, last);
@@ -31,17 +31,25 @@ export function CurveChart({ picture, time, dekads, pointed, onPoint }: Props) {
 
   useEffect(() => {
     if (!canvas.current?.getContext('2d')) return undefined;
-    const theme = readChartTheme(canvas.current);
-    const made = new Chart(canvas.current, chartConfig({ picture, time, theme, pointed: () => latest.current }));
+    const made = new Chart(canvas.current, chartConfig(content.current, readChartTheme(canvas.current)));
     chart.current = made;
+    // A canvas does not wait for web fonts.
+    void document.fonts?.ready.then(() => {
+      if (chart.current === made) made.update('none');
+    });
     return () => {
       chart.current = null;
       made.destroy();
     };
-  }, [picture, time, themeKey]);
+  }, [themeKey]);
 
   useEffect(() => {
-    latest.current = pointed;
+    Object.assign(content.current, { picture, time });
+    if (chart.current) refreshChart(chart.current, content.current);
+  }, [picture, time]);
+
+  useEffect(() => {
+    content.current.pointed = pointed;
     chart.current?.draw();
   }, [pointed]);
 

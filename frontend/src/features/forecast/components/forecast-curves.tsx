@@ -12,7 +12,9 @@ export function ForecastCurves({ forecast }: { scenario: Scenario; forecast: For
     <section aria-labelledby="curves-heading">
       <h3 id="curves-heading" className="text-small font-extrabold">
         Over the life
-        <span className="text-muted ml-2.5 font-normal">every third of a month; voltage under load at its coldest hour</span>
+        <span className="text-muted ml-2.5 font-normal">
+          every third of a month; voltage under load at its coldest hour
+        </span>
       </h3>
       <div className="mt-4 space-y-7">
         {pictures.map((picture) => (

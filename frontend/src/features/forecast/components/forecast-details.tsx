@@ -1,12 +1,23 @@
+import { memo, useDeferredValue } from 'react';
 import type { Forecast, Scenario } from '#common/engine/index.ts';
 import { ChargeLedger } from './charge-ledger.tsx';
 import { DutyCycles } from './duty-cycles.tsx';
 import { ForecastCurves } from './forecast-curves.tsx';
 
-/** What stands behind the forecast: ledger, curves, duty cycles. */
-export function ForecastDetails({ scenario, forecast }: { scenario: Scenario; forecast: Forecast | null }) {
+interface Props {
+  /** The document that `forecast` belongs to. */
+  scenario: Scenario;
+  forecast: Forecast | null;
+}
+
+/** What stands behind the forecast: ledger, curves, duty cycles. Typing comes before them. */
+export function ForecastDetails({ scenario, forecast }: Props) {
+  return <Details scenario={useDeferredValue(scenario)} forecast={useDeferredValue(forecast)} />;
+}
+
+const Details = memo(function Details({ scenario, forecast }: Props) {
   return (
-    <section aria-labelledby="details-heading" className="space-y-12">
+    <section aria-labelledby="details-heading" className="min-w-0 space-y-12">
       <h2 id="details-heading" className="sr-only">
         Behind the forecast
       </h2>
@@ -21,4 +32,4 @@ export function ForecastDetails({ scenario, forecast }: { scenario: Scenario; fo
       )}
     </section>
   );
-}
+});

@@ -65,7 +65,11 @@ function Notice({ scenario, forecast, problems }: Pick<Props, 'scenario' | 'fore
 function Waiting({ scenario, problems, isComputing }: Pick<Props, 'scenario' | 'problems' | 'isComputing'>) {
   const move = nextMove(scenario, problems);
   if (move === null || (isComputing && problems.length === 0)) {
-    return <p className="text-muted min-h-[13.5rem] text-[1.4375rem] leading-[1.36] font-light">Computing the first forecast…</p>;
+    return (
+      <p className="text-muted min-h-[13.5rem] text-[1.4375rem] leading-[1.36] font-light">
+        Computing the first forecast…
+      </p>
+    );
   }
   return (
     <div className="min-h-[13.5rem]">

@@ -39,7 +39,14 @@ export const RibbonRowPicture = memo(function RibbonRowPicture(props: Props) {
         <rect x={share(row.livedTo)} width={share(1 - row.livedTo)} height={rowPx} fill={`url(#${patternId}-none)`} />
       )}
       {Array.from({ length: 11 }, (_, i) => (
-        <line key={i} x1={share((i + 1) / 12)} x2={share((i + 1) / 12)} y2={rowPx} className="stroke-paper" strokeOpacity="0.35" />
+        <line
+          key={i}
+          x1={share((i + 1) / 12)}
+          x2={share((i + 1) / 12)}
+          y2={rowPx}
+          className="stroke-paper"
+          strokeOpacity="0.35"
+        />
       ))}
       {row.cold.map(({ from, to }) => (
         <svg key={from} x={share(from)} y={-coldPx} width={share(to - from)} height={coldPx}>
@@ -70,13 +77,30 @@ function Tints({ row, patternId, rowPx }: { row: RibbonRow; patternId: string; r
   return row.runs.map(({ from, to, step }) => (
     <g key={from}>
       {/* A hair wider than its share, so that no seam shows between runs. */}
-      <rect x={share(from)} width={share(Math.min(1, to + 0.0008) - from)} height={rowPx} className={HEADROOM_FILL[step]} />
-      {step >= 4 && <rect x={share(from)} width={share(to - from)} height={rowPx} fill={`url(#${patternId}-${step})`} />}
+      <rect
+        x={share(from)}
+        width={share(Math.min(1, to + 0.0008) - from)}
+        height={rowPx}
+        className={HEADROOM_FILL[step]}
+      />
+      {step >= 4 && (
+        <rect x={share(from)} width={share(to - from)} height={rowPx} fill={`url(#${patternId}-${step})`} />
+      )}
     </g>
   ));
 }
 
-function Outline({ livedTo, rowPx, isFirst, isLast }: { livedTo: number; rowPx: number; isFirst: boolean; isLast: boolean }) {
+function Outline({
+  livedTo,
+  rowPx,
+  isFirst,
+  isLast,
+}: {
+  livedTo: number;
+  rowPx: number;
+  isFirst: boolean;
+  isLast: boolean;
+}) {
   const end = share(isLast ? 1 : livedTo);
   return (
     <g className="stroke-ink" strokeWidth="1">

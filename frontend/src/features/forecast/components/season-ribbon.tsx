@@ -46,7 +46,7 @@ export function SeasonRibbon({ scenario, forecast }: { scenario: Scenario; forec
         <div className="text-muted text-[0.6875rem] leading-none" aria-hidden="true">
           {rows.map(({ year }) => (
             <div key={year} className="flex items-center" style={{ height: rowPx, marginBottom: gapPx }}>
-              {(year - 1) % labelEvery === 0 || year === 1 ? `year ${year}` : ''}
+              {year === 1 || year % labelEvery === 0 ? `year ${year}` : ''}
             </div>
           ))}
         </div>
@@ -82,7 +82,9 @@ export function SeasonRibbon({ scenario, forecast }: { scenario: Scenario; forec
         </div>
       </div>
       {current && <Readout month={current} isDefault={shown === null} />}
-      {ribbon.hiddenYears > 0 && <p className="text-muted text-small">{ribbon.hiddenYears} later years are not drawn.</p>}
+      {ribbon.hiddenYears > 0 && (
+        <p className="text-muted text-small">{ribbon.hiddenYears} later years are not drawn.</p>
+      )}
       <RibbonLegend patternId={patternId} hasEnd={rows.some((row) => row.endAt !== null)} />
       <RibbonTable months={months} />
     </section>
@@ -133,7 +135,7 @@ function Readout({ month, isDefault }: { month: RibbonMonth; isDefault: boolean 
         {words.event === '' ? '' : `, ${words.event}`}
       </span>
       <br />
-      {words.headroom} headroom · {words.coldest} coldest · {words.chargeLeft} charge left
+      {words.headroom} headroom · {words.coldest} coldest · {words.chargeLeft} left
     </p>
   );
 }

@@ -1,7 +1,7 @@
 import { useEffect, useRef, useState } from 'react';
 import type { Scenario } from '#common/engine/index.ts';
 import { openForecastWorker, openOnThisThread } from '../model/forecast-sources.ts';
-import { NO_FORECAST, startLiveForecast, type LiveForecast, type LiveForecastState } from '../model/live-forecast.ts';
+import { LiveForecast, NO_FORECAST, type LiveForecastState } from '../model/live-forecast.ts';
 
 /**
  * Forecast of a document while it is edited, computed in a worker. `forecast` and `scenario` stay those of the last
@@ -12,7 +12,7 @@ export function useLiveForecast(document: Scenario | null): LiveForecastState {
   const live = useRef<LiveForecast | null>(null);
 
   useEffect(() => {
-    const started = startLiveForecast(openForecastWorker, openOnThisThread, setState);
+    const started = new LiveForecast(openForecastWorker, openOnThisThread, setState);
     live.current = started;
     return () => {
       live.current = null;

@@ -1,26 +1,27 @@
-import type { ChartConfiguration, Plugin, ScaleOptionsByType } from 'chart.js';
+import type { Chart, ChartConfiguration, Plugin } from 'chart.js';
 import { formatNumber } from '#common/units/format-quantity.ts';
 import type { ChartTheme } from './chart-theme.ts';
 import type { CurvePicture, TimeAxis } from './curves.ts';
 
 export type LineChart = ChartConfiguration<'line', { x: number; y: number }[]>;
 
-interface Picture {
+/** What a chart shows at present. Its plugins look here each time they draw, so that a new forecast needs no new chart. */
+export interface ChartContent {
   picture: CurvePicture;
   time: TimeAxis;
-  theme: ChartTheme;
   /** Dekad that is read out, or null. */
-  pointed: () => number | null;
+  pointed: number | null;
 }
 
 /** A chart of one picture: lines told apart by dashes, named at their ends, an axis for each quantity with its unit. */
-export function chartConfig({ picture, time, theme, pointed }: Picture): LineChart {
+export function chartConfig(content: ChartContent, theme: ChartTheme): LineChart {
+  const { picture, time } = content;
   return {
     type: 'line',
     data: {
-      datasets: picture.curves.map((curve) => ({
+      datasets: picture.curves.map((curve, i) => ({
         label: curve.label,
-        data: curve.values.map((y, i) => ({ x: time.values[i] ?? 0, y })),
+        data: pointsOf(content, i),
         borderColor: theme.tones[curve.style.tone],
         borderWidth: curve.style.widthPx,
         borderDash: [...curve.style.dash],
@@ -42,15 +43,28 @@ export function chartConfig({ picture, time, theme, pointed }: Picture): LineCha
         y: { ...scale(theme, picture.unit), min: picture.min, max: picture.max },
       },
     },
-    plugins: [endLabels(picture, theme), axisMarks(picture, theme), cursor(time, theme, pointed)],
+    plugins: [endLabels(content, theme), axisMarks(content, theme), cursor(content, theme)],
   };
 }
 
-type LinearScale = Pick<ScaleOptionsByType<'linear'>, never> & Record<string, unknown> & { type: 'linear' };
+/** Puts new content into a chart that is there already. */
+export function refreshChart(chart: Chart<'line', { x: number; y: number }[]>, content: ChartContent): void {
+  const { picture, time } = content;
+  chart.data.datasets.forEach((dataset, i) => (dataset.data = pointsOf(content, i)));
+  const { x, y } = chart.options.scales ?? {};
+  Object.assign(x ?? {}, { max: time.max });
+  Object.assign(x?.title ?? {}, { text: time.title });
+  Object.assign(y ?? {}, { min: picture.min, max: picture.max });
+  chart.update('none');
+}
 
-function scale(theme: ChartTheme, title: string): LinearScale {
+function pointsOf({ picture, time }: ChartContent, curve: number): { x: number; y: number }[] {
+  return (picture.curves[curve]?.values ?? []).map((y, i) => ({ x: time.values[i] ?? 0, y }));
+}
+
+function scale(theme: ChartTheme, title: string) {
   return {
-    type: 'linear',
+    type: 'linear' as const,
     title: { display: true, text: title, color: theme.tones.muted, font: theme.font, padding: 2 },
     ticks: {
       color: theme.tones.muted,
@@ -65,10 +79,11 @@ function scale(theme: ChartTheme, title: string): LinearScale {
 }
 
 /** Names of the lines at their right ends, moved apart where they would overlap. */
-function endLabels(picture: CurvePicture, theme: ChartTheme): Plugin<'line'> {
+function endLabels(content: ChartContent, theme: ChartTheme): Plugin<'line'> {
   return {
     id: 'end-labels',
     afterDatasetsDraw(chart) {
+      const { picture } = content;
       if (picture.curves.length < 2) return;
       const { ctx, chartArea } = chart;
       const labels = picture.curves
@@ -92,10 +107,11 @@ function endLabels(picture: CurvePicture, theme: ChartTheme): Plugin<'line'> {
 }
 
 /** A break in a vertical axis that does not begin at zero, and a firm line at zero where values go below it. */
-function axisMarks(picture: CurvePicture, theme: ChartTheme): Plugin<'line'> {
+function axisMarks(content: ChartContent, theme: ChartTheme): Plugin<'line'> {
   return {
     id: 'axis-marks',
     beforeDatasetsDraw(chart) {
+      const { picture } = content;
       const { ctx, chartArea, scales } = chart;
       ctx.save();
       ctx.strokeStyle = theme.axis;
@@ -123,11 +139,11 @@ function axisMarks(picture: CurvePicture, theme: ChartTheme): Plugin<'line'> {
 }
 
 /** A line at the dekad that is read out, with a dot on each curve. */
-function cursor(time: TimeAxis, theme: ChartTheme, pointed: () => number | null): Plugin<'line'> {
+function cursor(content: ChartContent, theme: ChartTheme): Plugin<'line'> {
   return {
     id: 'cursor',
     afterDatasetsDraw(chart) {
-      const index = pointed();
+      const { pointed: index, time } = content;
       const value = index === null ? undefined : time.values[index];
       const x = value === undefined ? undefined : chart.scales['x']?.getPixelForValue(value);
       if (index === null || x === undefined) return;

@@ -128,7 +128,5 @@ export function dekadInWords(dekad: DekadPoint): string {
 
 /** The values of a picture at one dekad: "loaded 2.31 V, limit 2.0 V". */
 export function valuesInWords(picture: CurvePicture, index: number): string {
-  return picture.curves
-    .map((curve) => `${curve.label} ${curve.tell(curve.values[index] ?? 0)}`)
-    .join(', ');
+  return picture.curves.map((curve) => `${curve.label} ${curve.tell(curve.values[index] ?? 0)}`).join(', ');
 }

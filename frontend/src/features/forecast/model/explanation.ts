@@ -1,7 +1,8 @@
 import type { DekadPoint, Forecast, Scenario } from '#common/engine/index.ts';
 import { monthName } from '#common/units/format-duration.ts';
-import { YEAR_S } from '#common/units/si.ts';
-import { amps, celsius, charge, fineVolts, ohms, percent, volts } from './figures.ts';
+import { formatChargeMah } from '#common/units/format-quantity.ts';
+import { MAH_C } from '#common/units/si.ts';
+import { amps, celsius, fineVolts, ohms, percent, volts } from './figures.ts';
 import { lifeInWords, spanInWords, typedSpan } from './life-words.ts';
 import { findStep, partName } from './names.ts';
 import { oversubscriptions } from './oversubscribed.ts';
@@ -48,20 +49,25 @@ function explainLife(scenario: Scenario, forecast: Forecast): Explanation {
   };
 }
 
-/** Start − drawn − lost = left, so that the shown figures can be checked by hand. */
+/** Start − drawn − lost = left on one grid, so that the shown figures can be checked by hand. */
 function chargeRows(scenario: Scenario, forecast: Forecast): Explanation['rows'] {
   const spanS = forecast.dekads.at(-1)?.timeS ?? 0;
-  const leftC = forecast.chargeLeftFraction * forecast.startingChargeC;
-  const drawnC = Math.min(forecast.meanCurrentA * spanS, forecast.startingChargeC - leftC);
+  const { startingChargeC } = forecast;
+  const leftC = forecast.chargeLeftFraction * startingChargeC;
+  const lostC = Math.max(0, startingChargeC - leftC - forecast.meanCurrentA * spanS);
+  const stepC = MAH_C * 10 ** (Math.floor(Math.log10(Math.max(startingChargeC / MAH_C, 1e-9))) - 3);
+  const steps = (chargeC: number): number => Math.round(chargeC / stepC);
+  const told = (count: number): string => formatChargeMah(count * stepC);
+  const drawn = steps(startingChargeC) - steps(lostC) - steps(leftC);
   const reserve = scenario.supply.reserveFraction ?? 0;
   const storage = scenario.climate.storage ? ', after storage' : '';
   const kept = reserve > 0 ? `, without a reserve of ${percent(reserve)}` : '';
   return [
-    { label: `Starting charge${kept}${storage}`, value: charge(forecast.startingChargeC) },
+    { label: `Starting charge${kept}${storage}`, value: told(steps(startingChargeC)) },
     { label: 'Mean current from the cell', value: amps(forecast.meanCurrentA) },
-    { label: 'Drawn by the node', value: charge(drawnC) },
-    { label: 'Lost by self-discharge', value: charge(Math.max(0, forecast.startingChargeC - leftC - drawnC)) },
-    { label: 'Left at the end', value: charge(leftC) },
+    { label: 'Drawn by the node', value: told(drawn) },
+    { label: 'Lost by self-discharge', value: told(steps(lostC)) },
+    { label: 'Left at the end', value: told(steps(leftC)) },
   ];
 }
 

@@ -63,7 +63,7 @@ const bySize = (a: Draft, b: Draft): number => b.sum.abs().comparedTo(a.sum.abs(
 function groupOf(scenario: Scenario, key: string, entries: LedgerEntry[]): Draft {
   const children = entries.map((entry, i) => lineOf(scenario, entry, `${key}/${i}`)).sort(bySize);
   const [first] = entries;
-  const isRoutine = first?.routineId != null;
+  const isRoutine = first !== undefined && first.routineId !== null;
   const isAlone = entries.length === 1 && !isRoutine;
   return {
     id: key,

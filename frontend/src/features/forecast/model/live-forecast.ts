@@ -25,79 +25,81 @@ export type OpenForecastSource = (onReply: (reply: ForecastReply) => void, onFai
 /** Pause after the last change before the ledger is asked for, ms. */
 const LEDGER_PAUSE_MS = 120;
 
-export interface LiveForecast {
-  submit(document: Scenario | null): void;
-  stop(): void;
-}
-
 /**
  * Keeps one request under way and at most one waiting, so that the newest document wins and no queue grows. The forecast
  * comes first without its ledger; the ledger follows once typing pauses.
  */
-export function startLiveForecast(
-  open: OpenForecastSource,
-  openFallback: OpenForecastSource,
-  onChange: (state: LiveForecastState) => void,
-): LiveForecast {
-  let state = NO_FORECAST;
-  let lastId = 0;
-  let underWay: ForecastRequest | null = null;
-  let waiting: Scenario | null = null;
-  let ledgerTimer: ReturnType<typeof setTimeout> | undefined;
-  let isStopped = false;
+export class LiveForecast {
+  private state = NO_FORECAST;
+  private lastId = 0;
+  private underWay: ForecastRequest | null = null;
+  private waiting: Scenario | null = null;
+  private ledgerTimer: ReturnType<typeof setTimeout> | undefined;
+  private isStopped = false;
+  private isFallenBack = false;
+  private source: ForecastSource;
 
-  const tell = (change: Partial<LiveForecastState>): void => {
-    if (isStopped) return;
-    state = { ...state, ...change };
-    onChange(state);
-  };
-  const send = (document: Scenario, withLedger: boolean): void => {
-    lastId += 1;
-    underWay = { id: lastId, document, withLedger };
-    source.post(underWay);
-  };
-  const finish = (request: ForecastRequest, reply: ForecastReply): void => {
-    const settled = { problems: reply.problems, isComputing: false };
-    tell(reply.forecast ? { forecast: reply.forecast, scenario: request.document, ...settled } : settled);
+  constructor(
+    open: OpenForecastSource,
+    private readonly openFallback: OpenForecastSource,
+    private readonly onChange: (state: LiveForecastState) => void,
+  ) {
+    this.source = open(this.receive, this.fallBack);
+  }
+
+  /** Computes a document; null withdraws what is waiting and keeps what is shown. */
+  submit(document: Scenario | null): void {
+    clearTimeout(this.ledgerTimer);
+    if (document === null) {
+      this.waiting = null;
+      return;
+    }
+    if (!this.state.isComputing) this.tell({ isComputing: true });
+    if (this.underWay) this.waiting = document;
+    else this.send(document, false);
+  }
+
+  stop(): void {
+    this.isStopped = true;
+    clearTimeout(this.ledgerTimer);
+    this.source.stop();
+  }
+
+  private tell(change: Partial<LiveForecastState>): void {
+    this.state = { ...this.state, ...change };
+    this.onChange(this.state);
+  }
+
+  private send(document: Scenario, withLedger: boolean): void {
+    this.lastId += 1;
+    this.underWay = { id: this.lastId, document, withLedger };
+    this.source.post(this.underWay);
+  }
+
+  private readonly receive = (reply: ForecastReply): void => {
+    if (this.isStopped || this.underWay?.id !== reply.id) return;
+    const request = this.underWay;
+    this.underWay = null;
+    const good = reply.forecast ? { forecast: reply.forecast, scenario: request.document } : {};
+    if (this.waiting) {
+      // Shown although already old: under fast typing the picture would stand still otherwise.
+      this.tell(reply.forecast ? { ...good, problems: [] } : {});
+      const next = this.waiting;
+      this.waiting = null;
+      this.send(next, false);
+      return;
+    }
+    this.tell({ ...good, problems: reply.problems, isComputing: false });
     if (reply.forecast && !request.withLedger) {
-      ledgerTimer = setTimeout(() => send(request.document, true), LEDGER_PAUSE_MS);
+      this.ledgerTimer = setTimeout(() => this.send(request.document, true), LEDGER_PAUSE_MS);
     }
   };
-  const receive = (reply: ForecastReply): void => {
-    if (isStopped || underWay?.id !== reply.id) return;
-    const request = underWay;
-    underWay = null;
-    if (waiting) {
-      const next = waiting;
-      waiting = null;
-      // Shown although already old: under fast typing the picture would stand still otherwise.
-      if (reply.forecast) tell({ forecast: reply.forecast, scenario: request.document, problems: [] });
-      send(next, false);
-    } else finish(request, reply);
-  };
-  const fallBack = (): void => {
-    if (isStopped || source.isFallback) return;
-    source.stop();
-    source = { ...openFallback(receive, () => undefined), isFallback: true };
-    if (underWay) source.post(underWay);
-  };
-  let source: ForecastSource & { isFallback: boolean } = { ...open(receive, fallBack), isFallback: false };
 
-  return {
-    submit(document) {
-      clearTimeout(ledgerTimer);
-      if (document === null) {
-        waiting = null;
-        return;
-      }
-      if (!state.isComputing) tell({ isComputing: true });
-      if (underWay) waiting = document;
-      else send(document, false);
-    },
-    stop() {
-      isStopped = true;
-      clearTimeout(ledgerTimer);
-      source.stop();
-    },
+  private readonly fallBack = (): void => {
+    if (this.isStopped || this.isFallenBack) return;
+    this.isFallenBack = true;
+    this.source.stop();
+    this.source = this.openFallback(this.receive, () => undefined);
+    if (this.underWay) this.source.post(this.underWay);
   };
 }

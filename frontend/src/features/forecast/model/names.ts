@@ -48,7 +48,5 @@ export function routineName(scenario: Scenario, routineId: string | null): strin
 /** "the cell" or, of a pack, "the cells". */
 export function cellWords(scenario: Scenario): { the: string; its: string; isPlural: boolean } {
   const isPlural = scenario.supply.series * scenario.supply.parallel > 1;
-  return isPlural
-    ? { the: 'the cells', its: 'their', isPlural }
-    : { the: 'the cell', its: 'its', isPlural };
+  return isPlural ? { the: 'the cells', its: 'their', isPlural } : { the: 'the cell', its: 'its', isPlural };
 }

@@ -11,18 +11,21 @@ export function nextMove(scenario: Scenario | null, problems: readonly InputProb
   if (scenario && scenario.node.parts.length === 0) {
     return {
       headline: 'Add the first part.',
-      detail: 'A node is made of parts that draw current in states: a radio, a controller, a sensor. The forecast starts with the first one.',
+      detail:
+        'A node is made of parts that draw current in states: a radio, a controller, a sensor. The forecast starts with the first one.',
     };
   }
   if (scenario && !scenario.node.routines.some((routine) => routine.enabled && routine.steps.length > 0)) {
     return {
       headline: 'Add a routine.',
-      detail: 'So far the node only rests. A routine is a sequence of steps with a schedule, such as “report every 15 minutes”.',
+      detail:
+        'So far the node only rests. A routine is a sequence of steps with a schedule, such as “report every 15 minutes”.',
     };
   }
   if (problems.length > 0) {
     return {
-      headline: problems.length === 1 ? 'One entry needs another look.' : `${problems.length} entries need another look.`,
+      headline:
+        problems.length === 1 ? 'One entry needs another look.' : `${problems.length} entries need another look.`,
       detail: 'The forecast comes back as soon as they can be read.',
     };
   }

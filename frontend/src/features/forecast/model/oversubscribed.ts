@@ -12,7 +12,7 @@ export interface Oversubscription {
   available: string;
 }
 
-/** Routines longer than their period and parts busy for more than all the time, routines first, largest excess first. */
+/** Routines longer than their period, or else parts busy for more than all the time; largest excess first. */
 export function oversubscriptions(scenario: Scenario): Oversubscription[] {
   try {
     const { regulator } = scenario.supply;
@@ -20,18 +20,22 @@ export function oversubscriptions(scenario: Scenario): Oversubscription[] {
     const program = compileNode(scenario.node, { defaultReferenceVoltageV });
     const rates = program.routines.map(({ schedule, cycleS }) => cyclesPerDay(schedule, cycleS) / DAY_S);
     const { routines, parts } = oversubscription(program, rates);
-    return [
-      ...[...routines]
+    if (routines.length > 0) {
+      return [...routines]
         .sort((a, b) => b.cycleS / b.periodS - a.cycleS / a.periodS)
         .map(({ routineId, cycleS, periodS }) => ({
           name: routineName(scenario, routineId),
           need: seconds(cycleS),
           available: `and comes every ${seconds(periodS)}`,
-        })),
-      ...[...parts]
-        .sort((a, b) => b.share - a.share)
-        .map(({ partId, share }) => ({ name: partName(scenario, partId), need: percent(share), available: 'of the time' })),
-    ];
+        }));
+    }
+    return [...parts]
+      .sort((a, b) => b.share - a.share)
+      .map(({ partId, share }) => ({
+        name: partName(scenario, partId),
+        need: percent(share),
+        available: 'of the time',
+      }));
   } catch (error) {
     // A node that does not compile has problems of its own, which are told elsewhere.
     if (error instanceof EngineError) return [];

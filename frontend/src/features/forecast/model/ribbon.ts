@@ -150,7 +150,7 @@ function monthsOf(forecast: Forecast, dekads: DekadPoint[], { endS, warningS }: 
 export function ribbonMeasures(rowCount: number): { rowPx: number; gapPx: number; labelEvery: number } {
   if (rowCount <= 8) return { rowPx: 17, gapPx: 7, labelEvery: 1 };
   if (rowCount <= 12) return { rowPx: 13, gapPx: 5, labelEvery: 1 };
-  if (rowCount <= 20) return { rowPx: 9, gapPx: 4, labelEvery: 2 };
+  if (rowCount <= 20) return { rowPx: 9, gapPx: 4, labelEvery: 3 };
   return { rowPx: 6, gapPx: 2, labelEvery: 5 };
 }
 

@@ -1,10 +1,10 @@
 import { describe, expect, it } from 'vitest';
-import type { Scenario } from '#common/engine/index.ts';
+import type { Forecast, Scenario } from '#common/engine/index.ts';
 import { YEAR_S } from '#common/units/si.ts';
 import { pictureForecast, pictureScenario } from '#test/support/picture-fixtures.ts';
 import { forecastSentence, sentenceText } from './sentence.ts';
 
-const told = (forecast: Parameters<typeof pictureForecast>[0], change?: (scenario: Scenario) => void): string =>
+const told = (forecast: Partial<Forecast>, change?: (scenario: Scenario) => void): string =>
   sentenceText(forecastSentence(pictureScenario(change), pictureForecast(forecast))).replaceAll('\u00a0', ' ');
 
 describe('forecastSentence', () => {
@@ -35,7 +35,13 @@ describe('forecastSentence', () => {
 
   it('forecastSentence: tells an exhausted charge', () => {
     expect(
-      told({ outcome: 'charge-exhausted', chargeLeftFraction: 0, endMonth: 6, criticalStepId: 'rest', limitedBy: 'charge' }),
+      told({
+        outcome: 'charge-exhausted',
+        chargeLeftFraction: 0,
+        endMonth: 6,
+        criticalStepId: 'rest',
+        limitedBy: 'charge',
+      }),
     ).toContain('It ends in June of its seventh year, when the cell is empty: with 0 % of the charge left.');
   });
 
@@ -46,10 +52,13 @@ describe('forecastSentence', () => {
   });
 
   it('forecastSentence: tells a shelf life with its length', () => {
-    const text = told({ outcome: 'shelf-life', lifeS: 10 * YEAR_S, endMonth: 9, chargeLeftFraction: 0.4, warning: null }, (s) => {
-      s.supply.cell.shelfLifeS = 10 * YEAR_S;
-      delete s.supply.lowBattery;
-    });
+    const text = told(
+      { outcome: 'shelf-life', lifeS: 10 * YEAR_S, endMonth: 9, chargeLeftFraction: 0.4, warning: null },
+      (s) => {
+        s.supply.cell.shelfLifeS = 10 * YEAR_S;
+        delete s.supply.lowBattery;
+      },
+    );
     expect(text).toBe(
       'Lives 10 years with typical figures. It ends in September of its tenth year, when the cell reaches its shelf life of ' +
         '10 years, with 40 % of the charge left.',
@@ -57,7 +66,13 @@ describe('forecastSentence', () => {
   });
 
   it('forecastSentence: tells a life past the horizon with the charge left', () => {
-    const text = told({ outcome: 'outlives-horizon', lifeS: null, endMonth: null, chargeLeftFraction: 0.31, warning: null });
+    const text = told({
+      outcome: 'outlives-horizon',
+      lifeS: null,
+      endMonth: null,
+      chargeLeftFraction: 0.31,
+      warning: null,
+    });
     expect(text).toContain('Lives longer than 40 years with typical figures: 31 % of the charge is left');
   });
 
@@ -68,14 +83,20 @@ describe('forecastSentence', () => {
     );
   });
 
-  const oversubscribed = { outcome: 'oversubscribed', lifeS: null, endMonth: null, dekads: [], warning: null } as const;
+  const oversubscribed: Partial<Forecast> = {
+    outcome: 'oversubscribed',
+    lifeS: null,
+    endMonth: null,
+    dekads: [],
+    warning: null,
+  };
 
   it('forecastSentence: says which routine needs more time than its period', () => {
     const text = told({ ...oversubscribed, chargeLeftFraction: 1 }, (s) => {
       const step = s.node.routines[0]?.steps[0];
       if (step) step.duration = { kind: 'fixed', typical: 1_200 };
     });
-    expect(text).toContain('Oversubscribed with typical figures: report needs 20 min and comes every 15 min. So does one other.');
+    expect(text).toContain('Oversubscribed with typical figures: report needs 20 min and comes every 15 min. No life');
     expect(text).toContain('100 % of the charge is left');
   });
 

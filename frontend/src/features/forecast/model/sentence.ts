@@ -190,7 +190,8 @@ function chargeLeft(forecast: Forecast): SentencePart {
 
 function warning(scenario: Scenario, forecast: Forecast): SentencePart[] {
   if (!scenario.supply.lowBattery) return [];
-  if (!forecast.warning) return [plain(' The low-battery warning does '), figure('not come', 'warning'), plain(' before.')];
+  if (!forecast.warning)
+    return [plain(' The low-battery warning does '), figure('not come', 'warning'), plain(' before.')];
   const cleared = forecast.warning.falseAlarmTimesS.length;
   const after = cleared === 0 ? '' : `, after ${cleared === 1 ? 'one that was' : `${cleared} that were`} cleared again`;
   return [

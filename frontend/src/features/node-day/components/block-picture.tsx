@@ -24,9 +24,9 @@ export function BlockPicture({ block }: { block: Block }) {
       }}
       title={`${block.name}, ${current}`}
     >
-      <span className="hidden flex-col px-1 pt-1 text-[0.6875rem] leading-[0.9375rem] whitespace-nowrap @min-[2.1rem]:flex">
-        <span className="truncate">{block.name}</span>
-        <span className="truncate tabular-nums">{current}</span>
+      <span className="hidden flex-col overflow-hidden pt-1 pl-[0.1875rem] text-[0.6875rem] leading-[0.9375rem] whitespace-nowrap @min-[1.9rem]:flex">
+        <span>{block.name}</span>
+        <span className="tabular-nums">{current}</span>
       </span>
     </div>
   );

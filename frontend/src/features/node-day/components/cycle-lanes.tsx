@@ -17,14 +17,11 @@ interface Props {
 
 /** Narrower than this, currents no longer fit into their blocks; then the picture scrolls. */
 const LEAST_PX = 560;
-const PX_PER_WEIGHT = 19;
+const PX_PER_WEIGHT = 24;
 
 /** One cycle: names and durations on top, below a lane for each part at one height. */
 export function CycleLanes({ scenario, compiled, selectedStepId, onSelectStep }: Props) {
-  const picture = useMemo(
-    () => cyclePicture(scenario, compiled.routine, compiled.parts),
-    [scenario, compiled],
-  );
+  const picture = useMemo(() => cyclePicture(scenario, compiled.routine, compiled.parts), [scenario, compiled]);
   const handleClick = (event: MouseEvent<HTMLElement>): void => {
     const box = event.currentTarget.getBoundingClientRect();
     const at = (event.clientX - box.left) / box.width;
@@ -80,7 +77,11 @@ function Guides({ picture, selectedStepId }: { picture: CyclePicture; selectedSt
         />
       )}
       {picture.steps.map((step) => (
-        <div key={`${step.kind} ${step.from}`} className="border-hair absolute -top-11 bottom-0 border-l" style={{ left: percent(step.from) }} />
+        <div
+          key={`${step.kind} ${step.from}`}
+          className="border-hair absolute -top-11 bottom-0 border-l"
+          style={{ left: percent(step.from) }}
+        />
       ))}
     </>
   );
@@ -89,7 +90,9 @@ function Guides({ picture, selectedStepId }: { picture: CyclePicture; selectedSt
 function LaneRow({ lane }: { lane: Lane }) {
   return (
     <div className="relative h-16">
-      <span className="text-small sticky left-0 inline-block pt-0.5 text-[0.6875rem] font-semibold sm:hidden">{lane.name}</span>
+      <span className="text-small sticky left-0 inline-block pt-0.5 text-[0.6875rem] font-semibold sm:hidden">
+        {lane.name}
+      </span>
       {/* Rest: a thin line through the whole lane, on which the blocks stand. */}
       <div className="bg-line absolute inset-x-0 bottom-1.5 h-px" />
       {lane.blocks.map((block) => (

@@ -1,4 +1,4 @@
-import { useMemo } from 'react';
+import { useId, useMemo } from 'react';
 import type { Scenario } from '#common/engine/index.ts';
 import { formatDuration } from '#common/units/format-duration.ts';
 import { compileAlone } from '../model/compiled-routine.ts';
@@ -52,7 +52,9 @@ export function DayLanes({ scenario, selectedId, onSelectRoutine }: Props) {
               className="grid w-full gap-x-4 py-2 text-left sm:grid-cols-[8rem_minmax(0,1fr)]"
               onClick={() => onSelectRoutine(row.id)}
             >
-              <span className={`text-small ${row.id === selectedId ? 'font-extrabold underline decoration-accent decoration-2 underline-offset-4' : 'font-semibold'}`}>
+              <span
+                className={`text-small ${row.id === selectedId ? 'font-extrabold underline decoration-accent decoration-2 underline-offset-4' : 'font-semibold'}`}
+              >
                 {row.name}
               </span>
               <span className="min-w-0">
@@ -77,26 +79,43 @@ function dayRows(scenario: Scenario): DayRow[] {
       const cycleS = compiled.kind === 'laid-out' ? compiled.routine.cycleS : 0;
       const strip = dayStrip(routine, cycleS);
       const awake = strip.perDay > 0 && cycleS > 0 ? `, ${formatDuration(strip.perDay * cycleS)} awake` : '';
-      const told = routine.schedule.kind === 'once' ? 'not on an ordinary day' : `${cyclesInWords(strip.perDay)}${awake}`;
+      const told =
+        routine.schedule.kind === 'once' ? 'not on an ordinary day' : `${cyclesInWords(strip.perDay)}${awake}`;
       return { id: routine.id, name: routine.name, schedule: scheduleInWords(routine.schedule), strip, told };
     });
 }
 
 function Strip({ strips, heightPx }: { strips: readonly DayStrip[]; heightPx: number }) {
+  const id = useId();
+  // Single marks last, so that a density never hides them.
+  const ordered = [...strips].sort((a, b) => Number(a.kind === 'marks') - Number(b.kind === 'marks'));
   return (
     <svg width="100%" height={heightPx} className="block" aria-hidden="true" focusable="false">
-      {strips.map((strip, i) => (
-        <Marks key={i} strip={strip} heightPx={heightPx} />
+      <defs>
+        <pattern id={id} width="3" height="3" patternUnits="userSpaceOnUse">
+          <rect width="3" height="3" className="fill-tint-2" />
+          <line x1="1" x2="1" y2="3" className="stroke-tint-4" />
+        </pattern>
+      </defs>
+      {ordered.map((strip, i) => (
+        <Marks key={i} strip={strip} heightPx={heightPx} densityFill={`url(#${id})`} />
       ))}
       <line x2="100%" y1={heightPx - 0.5} y2={heightPx - 0.5} className="stroke-line" />
       {HOURS.slice(1, -1).map((hour) => (
-        <line key={hour} x1={percent(hour / 24)} x2={percent(hour / 24)} y1={heightPx - 5} y2={heightPx} className="stroke-line" />
+        <line
+          key={hour}
+          x1={percent(hour / 24)}
+          x2={percent(hour / 24)}
+          y1={heightPx - 5}
+          y2={heightPx}
+          className="stroke-line"
+        />
       ))}
     </svg>
   );
 }
 
-function Marks({ strip, heightPx }: { strip: DayStrip; heightPx: number }) {
+function Marks({ strip, heightPx, densityFill }: { strip: DayStrip; heightPx: number; densityFill: string }) {
   if (strip.kind === 'density' || strip.kind === 'solid') {
     const shade = strip.kind === 'solid' ? 1 : density(strip.perDay);
     return strip.stretchesH.map(([from, to]) => (
@@ -106,7 +125,7 @@ function Marks({ strip, heightPx }: { strip: DayStrip; heightPx: number }) {
         width={percent((to - from) / 24)}
         y={heightPx * (1 - shade)}
         height={heightPx * shade}
-        className="fill-tint-3"
+        {...(strip.kind === 'solid' ? { className: 'fill-tint-4' } : { fill: densityFill })}
       />
     ));
   }

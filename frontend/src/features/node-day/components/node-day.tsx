@@ -32,10 +32,20 @@ export function NodeDay({ scenario, routineId, selectedStepId, onSelectStep, onS
   const compiled = useMemo(() => (routine ? compileAlone(scenario, routine) : null), [scenario, routine]);
 
   if (parts.length === 0) {
-    return <Missing title="The day of the node" text="Parts come first: add a radio, a controller or a sensor, and its lane appears here." />;
+    return (
+      <Missing
+        title="The day of the node"
+        text="Parts come first: add a radio, a controller or a sensor, and its lane appears here."
+      />
+    );
   }
   if (!routine || !compiled) {
-    return <Missing title="The day of the node" text="The node only rests. Add a routine, and its steps appear here, a lane for each part." />;
+    return (
+      <Missing
+        title="The day of the node"
+        text="The node only rests. Add a routine, and its steps appear here, a lane for each part."
+      />
+    );
   }
   return (
     <section aria-labelledby="node-day-heading" className="min-w-0">
@@ -47,7 +57,9 @@ export function NodeDay({ scenario, routineId, selectedStepId, onSelectStep, onS
         <p className="text-small">
           <span className="font-extrabold">The day of the node</span>
           <span className="text-muted ml-2.5">
-            {view === 'cycle' ? 'one cycle; time on a logarithmic scale, tint by current' : 'all routines over 24 hours'}
+            {view === 'cycle'
+              ? 'one cycle; time on a logarithmic scale, tint by current'
+              : 'all routines over 24 hours'}
           </span>
         </p>
         <div className="text-small">

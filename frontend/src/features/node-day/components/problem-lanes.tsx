@@ -17,7 +17,10 @@ export function ProblemLanes({ scenario, routine, problems, selectedStepId, onSe
   return (
     <div className="mt-2">
       <div className="overflow-x-auto" role="group" aria-label="Steps of the routine" tabIndex={0}>
-        <table className="w-full table-fixed border-collapse text-left" style={{ minWidth: `${8 + routine.steps.length * 6}rem` }}>
+        <table
+          className="w-full table-fixed border-collapse text-left"
+          style={{ minWidth: `${8 + routine.steps.length * 6}rem` }}
+        >
           <thead>
             <tr className="align-bottom">
               <th className="w-32 pr-3 pb-2">
@@ -39,7 +42,12 @@ export function ProblemLanes({ scenario, routine, problems, selectedStepId, onSe
           </thead>
           <tbody>
             {parts.map((part) => (
-              <LaneOfPart key={part.id} part={part} routine={routine} problems={problems.filter(({ partId }) => partId === part.id)} />
+              <LaneOfPart
+                key={part.id}
+                part={part}
+                routine={routine}
+                problems={problems.filter(({ partId }) => partId === part.id)}
+              />
             ))}
           </tbody>
         </table>

@@ -39,9 +39,11 @@ export function StepHeader({ steps, selectedStepId, onSelectStep }: Props) {
         const place = 'absolute inset-y-0 overflow-hidden pl-1 pr-0.5 text-left text-[0.6875rem] leading-[0.9375rem]';
         if (step.stepId === null) {
           return (
-            <div key={`${step.kind} ${step.from}`} className={`${place} text-muted pt-1.5`} style={style}>
-              <span className="block truncate">{step.name}</span>
-              <span className="block truncate tabular-nums">{formatDuration(step.durationS)}</span>
+            <div key={`${step.kind} ${step.from}`} className={`@container ${place} text-muted`} style={style}>
+              <div className="hidden pt-1.5 @min-[2.4rem]:block">
+                <span className="block truncate">{step.name}</span>
+                <span className="block truncate tabular-nums">{formatDuration(step.durationS)}</span>
+              </div>
             </div>
           );
         }

@@ -12,8 +12,7 @@ export interface LaneProblem {
 
 /** A routine laid out by the engine, or what keeps it from being laid out. */
 export type CompiledRoutine =
-  | { kind: 'laid-out'; routine: RoutineProgram; parts: PartProgram[] }
-  | { kind: 'problems'; problems: LaneProblem[] };
+  { kind: 'laid-out'; routine: RoutineProgram; parts: PartProgram[] } | { kind: 'problems'; problems: LaneProblem[] };
 
 /** Compiles one routine of a node by itself, so that problems of other routines do not hide it. Disabled ones as well. */
 export function compileAlone(scenario: Scenario, routine: Routine): CompiledRoutine {
@@ -40,13 +39,20 @@ function laneProblem(scenario: Scenario, path: string, message: string): LanePro
   const listed = /node\.parts\[(\d+)\]/.exec(path)?.[1];
   const byIndex = listed === undefined ? undefined : scenario.node.parts[Number(listed)]?.id;
   const partId = scenario.node.parts.find((part) => part.id === named)?.id ?? byIndex ?? null;
-  return { partId, stepIndex: step === undefined ? null : Number(step), message: withStateNames(scenario, partId, message) };
+  return {
+    partId,
+    stepIndex: step === undefined ? null : Number(step),
+    message: withStateNames(scenario, partId, message),
+  };
 }
 
 /** The engine tells states by id; people know them by name. */
 function withStateNames(scenario: Scenario, partId: string | null, message: string): string {
   const states = scenario.node.parts.find((part) => part.id === partId)?.states ?? [];
-  return states.reduce((text, { id, name }) => text.replaceAll(`"${id}"`, `“${name}”`).replace(reachable(id), `$1${name}`), message);
+  return states.reduce(
+    (text, { id, name }) => text.replaceAll(`"${id}"`, `“${name}”`).replace(reachable(id), `$1${name}`),
+    message,
+  );
 }
 
 function reachable(id: string): RegExp {

@@ -49,7 +49,7 @@ export interface CyclePicture {
 }
 
 /** Rest is the longest by far; it gets no more room than this share. */
-const REST_SHARE = 0.16;
+const REST_SHARE = 0.1;
 /** Borders between the tints, A. */
 export const TINT_BORDERS_A = [10e-6, 100e-6, 1e-3, 10e-3] as const;
 
@@ -136,7 +136,14 @@ function stepSpans({ intervals }: RoutineProgram, columns: readonly Column[]): S
       return;
     }
     const name = kind === 'step' ? (intervals[i]?.stepName ?? '') : kind === 'return' ? 'return' : 'rest';
-    spans.push({ from: column.from, to: column.to, stepId: kind === 'step' ? column.stepId : null, kind, name, durationS });
+    spans.push({
+      from: column.from,
+      to: column.to,
+      stepId: kind === 'step' ? column.stepId : null,
+      kind,
+      name,
+      durationS,
+    });
   });
   return spans;
 }
@@ -168,7 +175,7 @@ function laneOf(
         from: column.from,
         to: column.to,
         kind: activity.kind,
-        name: activity.kind === 'state' ? (state?.name ?? '') : `to ${state?.name ?? ''}`,
+        name: activity.kind === 'state' ? (state?.name ?? '') : `→ ${state?.name ?? ''}`,
         currentA: draw.currentA,
         tint: tintOf(draw.currentA),
         role: activity.kind === 'state' ? (state?.role ?? null) : null,

@@ -40,7 +40,8 @@ function whenInWords(when: When | undefined): string {
   const words: string[] = [];
   if (when.belowC !== undefined) words.push(`below ${formatTemperature(when.belowC)}`);
   if (when.aboveC !== undefined) words.push(`from ${formatTemperature(when.aboveC)} up`);
-  if (when.months !== undefined) words.push(`in ${when.months.map((month) => monthName(month).slice(0, 3)).join(', ')}`);
+  if (when.months !== undefined)
+    words.push(`in ${when.months.map((month) => monthName(month).slice(0, 3)).join(', ')}`);
   return words.length === 0 ? '' : `only ${words.join(', ')}`;
 }
 
