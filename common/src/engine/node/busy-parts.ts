@@ -1,5 +1,5 @@
 import { fromMicros } from './micros.ts';
-import type { BusyClaim, Layout, Span } from './lay-out.ts';
+import type { BusyClaim, Layout, Span } from './layout.types.ts';
 import type { PartModel, StateModel } from './part-model.ts';
 
 /**
@@ -29,6 +29,12 @@ export function addBusyParts(
     if (mover && movesInTime && !isInState(layout, part, state, claim.startUs)) onElsewhere(mover, claim);
     layout.spans = withClaim(layout.spans, part, state, claim);
   }
+  if (layout.claims.length > 0) widenWindows(layout);
+}
+
+/** The spans no longer lie in the order of the windows, so each window has to look through all of them. */
+function widenWindows({ windows, spans }: Layout): void {
+  for (const window of windows) window.spanCount = spans.length;
 }
 
 /** The claim that begins first counts where two overlap; of two that begin together, that of the part whose id comes first. */

@@ -5,7 +5,7 @@ import type { LinkSettings, Routine, Step } from '../scenario/scenario.types.ts'
 import { addBusyParts } from './busy-parts.ts';
 import { intervalsOf } from './intervals.ts';
 import { layOut } from './lay-out.ts';
-import type { Layout, StepModel } from './lay-out.ts';
+import type { Layout, StepModel } from './layout.types.ts';
 import { fromMicros, toMicros } from './micros.ts';
 import type { RoutineProgram, Segment } from './node-program.types.ts';
 import type { NodeReport } from './node-report.ts';

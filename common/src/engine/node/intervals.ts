@@ -1,5 +1,5 @@
 import type { Step } from '../scenario/scenario.types.ts';
-import type { LaidWindow, Layout, Span } from './lay-out.ts';
+import type { LaidWindow, Layout, Span } from './layout.types.ts';
 import { fromMicros } from './micros.ts';
 import type { Interval, Occupant } from './node-program.types.ts';
 
@@ -19,13 +19,16 @@ const ROUNDING_US = 1e-3;
  * @example intervalsOf(layout, 'report', routine.steps)
  */
 export function intervalsOf(layout: Layout, routineId: string, steps: readonly Step[]): Interval[] {
-  const spans = [...layout.spans].sort((a, b) => a.startUs - b.startUs);
+  const { spans } = layout;
   const intervals: Interval[] = [];
   const active: Span[] = [];
   let next = 0;
   for (const window of layout.windows) {
     dropEnded(active, window.startUs);
-    for (let span = spans[next]; span && span.startUs < window.endUs; span = spans[++next]) active.push(span);
+    for (; next < window.spanCount; next++) {
+      const span = spans[next];
+      if (span && span.endUs > window.startUs) active.push(span);
+    }
     const step = steps[window.stepIndex];
     if (step) pushWindow(intervals, { window, step, active, id: `${routineId}/${step.id}` });
   }
@@ -74,12 +77,11 @@ function occupantsOf(active: readonly Span[], startUs: number, endUs: number): O
 /** Moments inside a window at which a part changes its activity, in order; those closer than a rounding are one. */
 function edgesWithin({ startUs, endUs }: LaidWindow, active: readonly Span[]): number[] {
   const edges: number[] = [];
-  const add = (edgeUs: number): void => {
-    if (edgeUs > startUs + ROUNDING_US && edgeUs < endUs - ROUNDING_US) edges.push(edgeUs);
-  };
+  const firstUs = startUs + ROUNDING_US;
+  const lastUs = endUs - ROUNDING_US;
   for (const span of active) {
-    add(span.startUs);
-    add(span.endUs);
+    if (span.startUs > firstUs && span.startUs < lastUs) edges.push(span.startUs);
+    if (span.endUs > firstUs && span.endUs < lastUs) edges.push(span.endUs);
   }
   if (edges.length < 2) return edges;
   edges.sort((a, b) => a - b);

@@ -1,65 +1,7 @@
+import type { LaidWindow, LayOutInput, Layout, Span, StepModel } from './layout.types.ts';
 import { fromMicros } from './micros.ts';
-import type { Occupant } from './node-program.types.ts';
 import type { Hop, PartModel, StateModel, TransitionPath } from './part-model.ts';
 import { transitionPath } from './transition-path.ts';
-
-/** A step made ready for the timeline. */
-export interface StepModel {
-  /** State of each part by part index; undefined where the step does not name the part. */
-  named: readonly (StateModel | undefined)[];
-  durationUs: number;
-  durationS: number;
-  termsS: readonly number[];
-}
-
-/** A time during which one part does one thing other than resting. */
-export interface Span {
-  occupant: Occupant;
-  startUs: number;
-  endUs: number;
-  termsS: readonly number[];
-  stepIndex: number;
-  /** Holding the state of the step before while other parts move; a transition's `busy` takes precedence over that. */
-  isHeld: boolean;
-}
-
-/** A part that a transition keeps in a state while it runs. */
-export interface BusyClaim {
-  hop: Hop;
-  /** Index of the part that moves. */
-  moverIndex: number;
-  startUs: number;
-  endUs: number;
-  stepIndex: number;
-}
-
-/** Moves before a step, a step, or the returns after the last step. */
-export interface LaidWindow {
-  kind: 'move' | 'step' | 'return';
-  stepIndex: number;
-  startUs: number;
-  endUs: number;
-  durationS: number;
-}
-
-/** One cycle of a routine laid out in time. */
-export interface Layout {
-  spans: Span[];
-  claims: BusyClaim[];
-  windows: LaidWindow[];
-  cycleUs: number;
-  /** Indices of parts that changed state without any declared transition. */
-  instantMovers: Set<number>;
-}
-
-/** What the layout needs to know of a routine; `onNoPath` is told each move that has no path. */
-export interface LayOutInput {
-  parts: readonly PartModel[];
-  steps: readonly StepModel[];
-  /** Whether the first step follows the last one. */
-  isCyclic: boolean;
-  onNoPath: (part: PartModel, from: StateModel, to: StateModel, stepIndex: number) => void;
-}
 
 /** A part still returning to rest: where its spans and claims lie in the layout, so that they can be cut short. */
 interface Returning {
@@ -120,7 +62,9 @@ interface At {
 /** Adds a window from the present end of the cycle on; one without length is left out. */
 function addWindow(layout: Layout, kind: LaidWindow['kind'], stepIndex: number, endUs: number): void {
   const startUs = layout.cycleUs;
-  if (endUs > startUs) layout.windows.push({ kind, stepIndex, startUs, endUs, durationS: fromMicros(endUs - startUs) });
+  if (endUs <= startUs) return;
+  const durationS = fromMicros(endUs - startUs);
+  layout.windows.push({ kind, stepIndex, startUs, endUs, durationS, spanCount: layout.spans.length });
 }
 
 function layMoves(input: LayOutInput, layout: Layout, at: At): void {
@@ -177,7 +121,8 @@ function layStep(input: LayOutInput, layout: Layout, at: At, returning: (Returni
     }
   }
   if (endUs > startUs) {
-    layout.windows.push({ kind: 'step', stepIndex, startUs, endUs, durationS: step.durationS });
+    const spanCount = layout.spans.length;
+    layout.windows.push({ kind: 'step', stepIndex, startUs, endUs, durationS: step.durationS, spanCount });
   }
   layout.cycleUs = endUs;
 }
