@@ -71,7 +71,7 @@ export function CurveChart({ picture, time, dekads, pointed, onPoint }: Props) {
       <figcaption className="text-small flex min-h-6 flex-wrap items-baseline gap-x-2.5">
         <span className="font-extrabold">{picture.title}</span>
         {picture.startsAt !== null && <span className="text-muted">axis begins at {picture.startsAt}</span>}
-        <span className="text-muted ml-auto tabular-nums" aria-hidden="true">
+        <span className="text-muted ml-auto tabular-nums max-sm:min-h-[2.5rem] max-sm:basis-full" aria-hidden="true">
           {dekad ? `${dekadInWords(dekad)}: ${valuesInWords(picture, shown)}` : ''}
         </span>
       </figcaption>

@@ -9,7 +9,7 @@ export function ForecastFacts({ scenario, forecast }: { scenario: Scenario; fore
         <div key={label} className="border-hair grid grid-cols-[1fr_auto] gap-x-4 border-b py-[0.45rem]">
           <dt>{label}</dt>
           <dd className="text-right font-bold">{value}</dd>
-          {note !== undefined && <dd className="text-muted text-small col-span-2 text-right">{note}</dd>}
+          {note !== undefined && <dd className="text-muted text-small col-span-2 min-h-5 text-right">{note}</dd>}
         </div>
       ))}
     </dl>

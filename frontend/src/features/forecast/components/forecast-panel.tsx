@@ -1,32 +1,26 @@
-import type { Forecast, Scenario } from '#common/engine/index.ts';
-import type { InputProblem } from '#common/schemas/problem.ts';
-import { nextMove } from '../model/next-move.ts';
-import type { FigureKey } from '../model/sentence.ts';
 import { Cautions } from './cautions.tsx';
+import { ForecastAnswer, type ForecastAnswerProps } from './forecast-answer.tsx';
 import { ForecastFacts } from './forecast-facts.tsx';
-import { ForecastSentence } from './forecast-sentence.tsx';
 import { SeasonRibbon } from './season-ribbon.tsx';
 
-interface Props {
-  /** The document that `forecast` belongs to; while there is none, the one being edited. */
-  scenario: Scenario;
-  forecast: Forecast | null;
-  problems: readonly InputProblem[];
-  isComputing: boolean;
-  onOpen?: (figure: FigureKey | null) => void;
+interface Props extends ForecastAnswerProps {
+  /** Below the width `lg` the page shows the sentence elsewhere. */
+  isSentenceElsewhere?: boolean;
 }
 
 /** The answer: sentence, season ribbon, facts and cautions. */
-export function ForecastPanel({ scenario, forecast, problems, isComputing, onOpen }: Props) {
+export function ForecastPanel({ isSentenceElsewhere = false, ...answer }: Props) {
+  const { scenario, forecast, isComputing } = answer;
   return (
     <section aria-labelledby="forecast-heading" aria-busy={isComputing}>
       <h2 id="forecast-heading" className="sr-only">
         Forecast
       </h2>
-      <Notice scenario={scenario} forecast={forecast} problems={problems} />
-      {forecast ? (
+      <div className={isSentenceElsewhere ? 'max-lg:hidden' : ''}>
+        <ForecastAnswer {...answer} />
+      </div>
+      {forecast && (
         <>
-          <ForecastSentence scenario={scenario} forecast={forecast} {...(onOpen ? { onOpen } : {})} />
           {forecast.dekads.length > 0 && (
             <div className="mt-4">
               <SeasonRibbon scenario={scenario} forecast={forecast} />
@@ -36,55 +30,10 @@ export function ForecastPanel({ scenario, forecast, problems, isComputing, onOpe
             <ForecastFacts scenario={scenario} forecast={forecast} />
           </div>
         </>
-      ) : (
-        <Waiting scenario={scenario} problems={problems} isComputing={isComputing} />
       )}
       <div className="mt-7">
         <Cautions scenario={scenario} forecast={forecast} />
       </div>
     </section>
-  );
-}
-
-/** One line kept free above the sentence, so that a problem does not push the page down. */
-function Notice({ scenario, forecast, problems }: Pick<Props, 'scenario' | 'forecast' | 'problems'>) {
-  const restsOnly = nextMove(scenario, []);
-  const text =
-    forecast && problems.length > 0
-      ? `Of the last complete input. ${problems.length === 1 ? 'One entry needs' : `${problems.length} entries need`} another look.`
-      : forecast && restsOnly
-        ? 'At rest only: there is no routine yet.'
-        : '';
-  return (
-    <p role="status" className="text-rust text-small min-h-[1.6rem] font-bold">
-      {text}
-    </p>
-  );
-}
-
-function Waiting({ scenario, problems, isComputing }: Pick<Props, 'scenario' | 'problems' | 'isComputing'>) {
-  const move = nextMove(scenario, problems);
-  if (move === null || (isComputing && problems.length === 0)) {
-    return (
-      <p className="text-muted min-h-[13.5rem] text-[1.4375rem] leading-[1.36] font-light">
-        Computing the first forecast…
-      </p>
-    );
-  }
-  return (
-    <div className="min-h-[13.5rem]">
-      <p className="text-[1.4375rem] leading-[1.36] font-extrabold tracking-[-0.01em]">{move.headline}</p>
-      <p className="mt-2 text-[1.1875rem] leading-[1.45] font-light">{move.detail}</p>
-      {problems.length > 0 && (
-        <ul className="text-small mt-3 space-y-1">
-          {problems.slice(0, 5).map(({ path, message }) => (
-            <li key={`${path} ${message}`} className="border-rust border-l-2 pl-3">
-              {message}
-            </li>
-          ))}
-          {problems.length > 5 && <li className="text-muted pl-3.5">and {problems.length - 5} more</li>}
-        </ul>
-      )}
-    </div>
   );
 }

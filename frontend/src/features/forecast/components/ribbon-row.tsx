@@ -24,7 +24,7 @@ interface Props {
 /** A year of the band. Its ends stay open where the band goes on in the next row. */
 export const RibbonRowPicture = memo(function RibbonRowPicture(props: Props) {
   const { row, patternId, rowPx, gapPx, isFirst, isLast, pointedColumn } = props;
-  const coldPx = Math.min(5, gapPx);
+  const coldPx = gapPx >= 4 ? Math.min(5, gapPx) : 1;
   return (
     <svg
       width="100%"
@@ -103,7 +103,7 @@ function Outline({
 }) {
   const end = share(isLast ? 1 : livedTo);
   return (
-    <g className="stroke-ink" strokeWidth="1">
+    <g className="stroke-ink" strokeWidth={rowPx < 8 ? 0.6 : 1}>
       <line x2={share(livedTo)} />
       <line x2={share(livedTo)} y1={rowPx} y2={rowPx} />
       {isFirst && <line y2={rowPx} strokeWidth="2" />}

@@ -20,7 +20,7 @@ export function SeasonRibbon({ scenario, forecast }: { scenario: Scenario; forec
   const last = months.length - 1;
   const shown = pointed === null ? null : Math.min(pointed, last);
   const current = months[shown ?? resting(months)];
-  const { rowPx, gapPx, labelEvery } = ribbonMeasures(rows.length);
+  const { rowPx, gapPx, labelEvery, heightPx } = ribbonMeasures(rows.length);
 
   const handlePointer = (event: PointerEvent): void => {
     const box = band.current?.getBoundingClientRect();
@@ -40,7 +40,7 @@ export function SeasonRibbon({ scenario, forecast }: { scenario: Scenario; forec
   return (
     <section aria-label="Season ribbon">
       <RibbonPatterns id={patternId} />
-      <div className="grid grid-cols-[3.1rem_minmax(0,1fr)]">
+      <div className="grid grid-cols-[3.1rem_minmax(0,1fr)] grid-rows-[auto_1fr]" style={{ minHeight: heightPx + 19 }}>
         <span />
         <MonthLetters ribbon={ribbon} active={shown === null ? null : shown % 12} />
         <div className="text-muted text-[0.6875rem] leading-none" aria-hidden="true">
@@ -65,7 +65,7 @@ export function SeasonRibbon({ scenario, forecast }: { scenario: Scenario; forec
           onPointerLeave={() => setPointed(null)}
           onBlur={() => setPointed(null)}
           onKeyDown={handleKey}
-          className="outline-offset-4"
+          className="self-start outline-offset-4"
         >
           {rows.map((row, i) => (
             <RibbonRowPicture

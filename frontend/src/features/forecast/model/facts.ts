@@ -8,7 +8,7 @@ import { findStep } from './names.ts';
 export interface Fact {
   label: string;
   value: string;
-  /** A second, quieter line. */
+  /** A second, quieter line; '' keeps its place. */
   note?: string;
 }
 
@@ -35,9 +35,10 @@ function targetFact(scenario: Scenario, forecast: Forecast): Fact {
   const label = `Target, ${typedSpan(wantedS)}`;
   if (forecast.outcome === 'oversubscribed') return { label, value: 'not met', note: 'the steps do not fit' };
   const reachedS = outages === 'tolerated' ? forecast.lastReportS : forecast.lifeS;
-  if (forecast.outcome === 'outlives-horizon' || reachedS === null) return { label, value: 'met' };
+  if (forecast.outcome === 'outlives-horizon' || reachedS === null)
+    return { label, value: 'met', note: 'outlives what this forecast looks at' };
   const overS = reachedS - wantedS;
-  if (Math.abs(overS) < 0.05 * YEAR_S) return { label, value: overS >= 0 ? 'just met' : 'just missed' };
+  if (Math.abs(overS) < 0.05 * YEAR_S) return { label, value: overS >= 0 ? 'just met' : 'just missed', note: '' };
   const by = spanInWords(Math.abs(overS));
   const tolerated = outages === 'tolerated' ? ', outages tolerated' : '';
   return { label, value: overS > 0 ? 'met' : 'not met', note: `${by} ${overS > 0 ? 'to spare' : 'short'}${tolerated}` };
@@ -55,14 +56,13 @@ function warningFact(scenario: Scenario, forecast: Forecast): Fact {
 function peakFact(scenario: Scenario, forecast: Forecast): Fact {
   const label = 'Heaviest pulse';
   const { peak } = forecast;
-  if (!peak) return { label, value: 'none' };
+  if (!peak) return { label, value: 'none', note: '' };
   const value = `${amps(peak.currentA)} for ${seconds(peak.durationS)}`;
   const step = findStep(scenario, peak.stepId)?.step.name;
   const meeting = peak.meeting
     ? `${amps(peak.meeting.currentA)} when routines meet, ${timesAYear(peak.meeting.perYear)}`
     : undefined;
-  const note = meeting ?? step;
-  return note === undefined ? { label, value } : { label, value, note };
+  return { label, value, note: meeting ?? step ?? '' };
 }
 
 function timesAYear(perYear: number): string {

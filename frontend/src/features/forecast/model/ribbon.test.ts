@@ -84,10 +84,11 @@ describe('headroomStep', () => {
 });
 
 describe('ribbonMeasures', () => {
-  it('ribbonMeasures: keeps every number of rows from 1 to 40 within 330 px', () => {
+  it('ribbonMeasures: fits every number of rows from 1 to 40 into the height kept free', () => {
     for (let rows = 1; rows <= 40; rows += 1) {
-      const { rowPx, gapPx } = ribbonMeasures(rows);
-      expect(rows * (rowPx + gapPx)).toBeLessThanOrEqual(330);
+      const { rowPx, gapPx, heightPx } = ribbonMeasures(rows);
+      expect(rows * (rowPx + gapPx)).toBeLessThanOrEqual(heightPx);
+      expect(heightPx).toBeLessThanOrEqual(330);
     }
   });
 });

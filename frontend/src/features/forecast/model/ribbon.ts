@@ -146,12 +146,22 @@ function monthsOf(forecast: Forecast, dekads: DekadPoint[], { endS, warningS }: 
   return months;
 }
 
-/** Row height and gap in px: few years get a generous band, forty still fit. */
-export function ribbonMeasures(rowCount: number): { rowPx: number; gapPx: number; labelEvery: number } {
-  if (rowCount <= 8) return { rowPx: 17, gapPx: 7, labelEvery: 1 };
-  if (rowCount <= 12) return { rowPx: 13, gapPx: 5, labelEvery: 1 };
-  if (rowCount <= 20) return { rowPx: 9, gapPx: 4, labelEvery: 3 };
-  return { rowPx: 6, gapPx: 2, labelEvery: 5 };
+export interface RibbonMeasures {
+  rowPx: number;
+  gapPx: number;
+  /** Every so many years a row is named. */
+  labelEvery: number;
+  /** Height kept free, so that a year more or less moves nothing. */
+  heightPx: number;
+}
+
+/** Few years get a generous band, forty still fit. */
+export function ribbonMeasures(rowCount: number): RibbonMeasures {
+  if (rowCount <= 4) return { rowPx: 20, gapPx: 8, labelEvery: 1, heightPx: 4 * 28 };
+  if (rowCount <= 8) return { rowPx: 17, gapPx: 7, labelEvery: 1, heightPx: 8 * 24 };
+  if (rowCount <= 12) return { rowPx: 13, gapPx: 5, labelEvery: 1, heightPx: 12 * 18 };
+  if (rowCount <= 20) return { rowPx: 9, gapPx: 4, labelEvery: 3, heightPx: 20 * 13 };
+  return { rowPx: 6, gapPx: 2, labelEvery: 5, heightPx: 40 * 8 };
 }
 
 /** The three consecutive coldest months of a climate, or null where the year has no seasons. */

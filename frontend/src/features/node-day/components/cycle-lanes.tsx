@@ -89,7 +89,7 @@ function Guides({ picture, selectedStepId }: { picture: CyclePicture; selectedSt
 
 function LaneRow({ lane }: { lane: Lane }) {
   return (
-    <div className="relative h-16">
+    <div className="relative h-[4.5rem] sm:h-16">
       <span className="text-small sticky left-0 inline-block pt-0.5 text-[0.6875rem] font-semibold sm:hidden">
         {lane.name}
       </span>
