@@ -4,9 +4,9 @@ import type { ScenarioDetail } from '#common/schemas/api/scenarios.ts';
 import { Breadcrumb } from '#frontend/components/frame-slots.tsx';
 import { ErrorState, Loading } from '#frontend/components/states.tsx';
 import { Tabs } from '#frontend/components/tabs.tsx';
+import { ForecastAnswer, type ForecastAnswerProps } from '#frontend/features/forecast/components/forecast-answer.tsx';
 import { ForecastDetails } from '#frontend/features/forecast/components/forecast-details.tsx';
 import { ForecastPanel } from '#frontend/features/forecast/components/forecast-panel.tsx';
-import { ForecastSentence } from '#frontend/features/forecast/components/forecast-sentence.tsx';
 import { useScenario } from '#frontend/features/scenario-editor/api/scenario.ts';
 import { ConflictDialog } from '#frontend/features/scenario-editor/components/frame/conflict-dialog.tsx';
 import { KeptWorkNotice, SaveNotice } from '#frontend/features/scenario-editor/components/frame/notices.tsx';
@@ -156,16 +156,17 @@ function Notices({ kept, onSettled, saving }: { kept: KeptWork | null; onSettled
 }
 
 function SentenceOnTop() {
-  const { forecast, scenario } = useForecastOnPage();
-  return forecast && scenario ? <ForecastSentence scenario={scenario} forecast={forecast} /> : <div className="h-54" />;
+  return <ForecastAnswer {...useAnswer()} />;
 }
 
 function Answer() {
+  return <ForecastPanel {...useAnswer()} isSentenceElsewhere />;
+}
+
+function useAnswer(): ForecastAnswerProps {
   const edited = useEditorState((state) => state.document);
   const { forecast, scenario, problems, isComputing } = useForecastOnPage();
-  return (
-    <ForecastPanel scenario={scenario ?? edited} forecast={forecast} problems={problems} isComputing={isComputing} />
-  );
+  return { scenario: scenario ?? edited, forecast, problems, isComputing };
 }
 
 function Details() {
