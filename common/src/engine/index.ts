@@ -22,5 +22,26 @@ export { dutyShares, oversubscription, type DutyShare, type Oversubscription } f
 export { exactDurationS, ledgerLines, type LedgerLine } from './node/ledger-lines.ts';
 export { meanCurrentA } from './node/mean-current.ts';
 export { cyclesPerDay, exactCyclesPerDay, isOnAt, isOnInMonth, monthsOn } from './node/schedule-rate.ts';
-// supply, climate
+// supply
+export { capacityAtCurrentC } from './supply/capacity-at-current.ts';
+export {
+  capacityTemperatureFactor,
+  freshResistanceOhm,
+  openCircuitV,
+  resistanceTemperatureFactor,
+} from './supply/cell-figures.ts';
+export { constantPowerA } from './supply/constant-power.ts';
+export { packOf, type PackFactors } from './supply/pack-of.ts';
+export { regulatorInputA, type RegulatorInput } from './supply/regulator-input.ts';
+export { selfDischargeLifeS } from './supply/self-discharge-life.ts';
+export { selfDischargeRatePerS, type SelfDischargeRateInput } from './supply/self-discharge-rate.ts';
+export { standardDeviation } from './supply/standard-deviation.ts';
+export { tableValue } from './supply/table-value.ts';
+export { usableChargeC, type UsableChargeInput } from './supply/usable-charge.ts';
+// climate
+export { dekadsOfYear, DEKAD_S, type CalendarDekad } from './climate/dekads.ts';
+export { winterStartMonth, wintersPassed } from './climate/winters.ts';
 // forecast
+export { ENGINE_VERSION } from './forecast/engine-version.ts';
+export { forecast } from './forecast/forecast.ts';
+export { quantisedThresholdV } from './forecast/warning.ts';

@@ -1,0 +1,147 @@
+import type { LoadSight } from '../supply/cell-load.ts';
+import { loadedVoltageV } from '../supply/cell-load.ts';
+import { firstFailingShare } from '../supply/first-failing-share.ts';
+import type { TestCase, TestConditions } from './dekad-load.ts';
+import { sourceAt, stretchOf } from './source-tables.ts';
+import type { SourceTables } from './source-tables.ts';
+
+/** Where and by what a node first fails. */
+export interface Failure {
+  /** Share of the starting charge that is spent then. */
+  spent: number;
+  /** The moment that fails; null when the charge is exhausted. */
+  testCase: TestCase | null;
+}
+
+/**
+ * The first failure while the charge goes down under constant conditions: depth 1 reached, or a moment whose loaded voltage falls
+ * below its limit. Both ends are tested too.
+ *
+ * @param source Tables of the pack.
+ * @param conditions Conditions of the tests.
+ * @param sight What loads see of the cell's voltage.
+ * @param range Share spent at the beginning and at the end.
+ * @returns The first failure, null for none. At equal charge exhaustion comes first, then the earlier case.
+ * @example firstFailure(source, conditions, sight, { fromSpent: 0, toSpent: 0.1 })
+ */
+export function firstFailure(
+  source: SourceTables,
+  conditions: TestConditions,
+  sight: LoadSight,
+  { fromSpent, toSpent }: { fromSpent: number; toSpent: number },
+): Failure | null {
+  const { capacityFactor, openCircuitShiftV } = conditions;
+  const fromDepth = fromSpent / capacityFactor;
+  if (fromDepth >= 1) return { spent: fromSpent, testCase: null };
+  const toDepth = Math.min(1, toSpent / capacityFactor);
+  const low = { openCircuitV: 0, resistanceFactor: 0 };
+  const high = { openCircuitV: 0, resistanceFactor: 0 };
+  sourceAt(source, fromDepth, low);
+  let depth = fromDepth;
+  for (let stretch = stretchOf(source, fromDepth); ; stretch++) {
+    const endDepth = Math.min(source.depths[stretch + 1] ?? 1, toDepth);
+    sourceAt(source, endDepth, high);
+    const first = firstOf(conditions.cases, sight, {
+      openCircuitFromV: low.openCircuitV + openCircuitShiftV,
+      openCircuitToV: high.openCircuitV + openCircuitShiftV,
+      resistanceFromOhm: low.resistanceFactor,
+      resistanceToOhm: high.resistanceFactor,
+    });
+    if (first) {
+      const failingDepth = depth + first.share * (endDepth - depth);
+      const spent = first.share === 0 && depth === fromDepth ? fromSpent : failingDepth * capacityFactor;
+      return { spent: Math.max(fromSpent, spent), testCase: first.testCase };
+    }
+    if (endDepth >= toDepth) break;
+    depth = endDepth;
+    low.openCircuitV = high.openCircuitV;
+    low.resistanceFactor = high.resistanceFactor;
+  }
+  return toDepth >= 1 ? { spent: capacityFactor, testCase: null } : null;
+}
+
+/** The case that fails first along a stretch; resistances of the stretch are factors yet. */
+function firstOf(
+  cases: readonly TestCase[],
+  sight: LoadSight,
+  stretch: {
+    openCircuitFromV: number;
+    openCircuitToV: number;
+    resistanceFromOhm: number;
+    resistanceToOhm: number;
+  },
+): { share: number; testCase: TestCase } | null {
+  const piece = { ...stretch };
+  let first: { share: number; testCase: TestCase } | null = null;
+  for (const testCase of cases) {
+    piece.resistanceFromOhm = stretch.resistanceFromOhm * testCase.ohm;
+    piece.resistanceToOhm = stretch.resistanceToOhm * testCase.ohm;
+    const share = firstFailingShare(testCase, sight, piece);
+    if (share !== null && (first === null || share < first.share)) first = { share, testCase };
+  }
+  return first;
+}
+
+/** The moment with the least headroom. */
+export interface LeastHeadroom {
+  testCase: TestCase;
+  /** Loaded voltage, V; 0 where the source collapses. */
+  loadedV: number;
+  /** Limit, V; where the rail can never reach the limit, the loaded voltage and what the rail lacks. */
+  limitV: number;
+  headroomV: number;
+}
+
+/**
+ * The critical moment at one charge: the case with the least headroom, the first of equal ones.
+ *
+ * @param source Tables of the pack.
+ * @param conditions Conditions of the tests, with at least one case.
+ * @param view What loads see of the cell's voltage, and the highest voltage that the rail can have, V.
+ * @param spent Share of the starting charge that is spent.
+ * @returns The moment; null without any case.
+ * @example leastHeadroom(source, conditions, converter, 0)?.headroomV
+ */
+export function leastHeadroom(
+  source: SourceTables,
+  { capacityFactor, openCircuitShiftV, cases }: TestConditions,
+  view: { sight: LoadSight; highestRailV: number },
+  spent: number,
+): LeastHeadroom | null {
+  const point = sourceAt(source, spent / capacityFactor, { openCircuitV: 0, resistanceFactor: 0 });
+  const openCircuitV = point.openCircuitV + openCircuitShiftV;
+  let least: TestCase | null = null;
+  let leastV = Infinity;
+  let loadedV = 0;
+  for (const testCase of cases) {
+    const voltageV = loadedVoltageV(testCase.load, view.sight, openCircuitV, testCase.ohm * point.resistanceFactor);
+    // A collapse and a limit out of reach are worse than any voltage.
+    const headroomV = Number.isNaN(voltageV) ? -Infinity : voltageV - testCase.limitV;
+    if (least !== null && headroomV >= leastV) continue;
+    least = testCase;
+    leastV = headroomV;
+    loadedV = Number.isNaN(voltageV) ? 0 : voltageV;
+  }
+  if (least === null) return null;
+  return { testCase: least, loadedV, ...limitOf(least, loadedV, view.highestRailV) };
+}
+
+/**
+ * Limit and headroom of a case at a loaded voltage, always finite.
+ *
+ * @param testCase The case.
+ * @param loadedV Loaded voltage, V.
+ * @param highestRailV Highest voltage that the rail can have, V.
+ * @returns Limit and headroom, V.
+ * @example limitOf(testCase, 2.4, Infinity).headroomV
+ */
+export function limitOf(
+  testCase: TestCase,
+  loadedV: number,
+  highestRailV: number,
+): { limitV: number; headroomV: number } {
+  const { limitV, candidate } = testCase;
+  if (limitV < Infinity) return { limitV, headroomV: loadedV - limitV };
+  const headroomV = highestRailV - candidate.limit.railV;
+  return { limitV: loadedV - headroomV, headroomV };
+}

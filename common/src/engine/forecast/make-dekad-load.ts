@@ -1,0 +1,125 @@
+import { capacityTemperatureFactor, openCircuitShiftV, resistanceTemperatureFactor } from '../supply/cell-figures.ts';
+import { selfDischargeRatePerS } from '../supply/self-discharge-rate.ts';
+import type { Candidate } from './candidates.ts';
+import type { CompiledScenario } from './compile-scenario.ts';
+import { cellLoad } from './converter.ts';
+import type { DekadLoad, MeanLoad, TestCase, TestConditions } from './dekad-load.ts';
+import { groupFactors, weighGroups } from './load-vector.ts';
+import { meanPieces } from './mean-pieces.ts';
+
+/** Loses everything within a microsecond; a document may ask for more. */
+const FASTEST_LOSS_PER_S = 1e6;
+
+/**
+ * Makes what a calendar dekad brings: rates, mean load averaged over the day, and the tests at its coldest hour.
+ *
+ * @param compiled The scenario.
+ * @param dekadOfYear 0 to 35.
+ * @returns The load of the dekad.
+ * @example makeDekadLoad(compiled, 0).cold.cases.length
+ */
+export function makeDekadLoad(compiled: CompiledScenario, dekadOfYear: number): DekadLoad {
+  const { calendar, onByDekad, loads, scenario, pack, ratesPerS } = compiled;
+  const dekad = calendar[dekadOfYear];
+  const pattern = onByDekad[dekadOfYear];
+  if (!dekad || !pattern) throw new RangeError(`There is no dekad ${dekadOfYear} in a year.`);
+  const { cell } = scenario.supply;
+  const rates = ratesPerS.map((ratePerS, index) => (pattern.isOn[index] === true ? ratePerS : 0));
+  const meanFactors = groupFactors(loads.groups, dekad.meanC, dekad.amplitudeK);
+  const capacityFactor = capacityTemperatureFactor(cell.capacityFactorByTemperature, dekad.meanC);
+  const shiftV = pack.openCircuitFactor * openCircuitShiftV(cell, dekad.meanC);
+  return {
+    dekad,
+    ratesPerS: rates,
+    meanFactors,
+    capacityFactor,
+    openCircuitShiftV: shiftV,
+    mean: meanLoad(compiled, { rates, meanFactors, capacityFactor, shiftV, dekad }),
+    lists: pattern.lists,
+    cold: testConditions(compiled, pattern.lists, dekad.coldestC),
+  };
+}
+
+function meanLoad(
+  { loads, monitorA, converter, scenario, source }: CompiledScenario,
+  given: { rates: Float64Array; meanFactors: Float64Array; capacityFactor: number; shiftV: number } & Pick<
+    DekadLoad,
+    'dekad'
+  >,
+): MeanLoad {
+  const { lossPerYear, referenceC, q10, activationEnergyJPerMol } = scenario.supply.cell.selfDischarge;
+  const { meanC, amplitudeK } = given.dekad;
+  const mean = new Float64Array(loads.rest);
+  mean[0] = (mean[0] ?? 0) + monitorA;
+  given.rates.forEach((ratePerS, routineIndex) => {
+    if (ratePerS === 0) return;
+    const offset = routineIndex * loads.width;
+    for (let at = 0; at < mean.length; at++) {
+      mean[at] = (mean[at] ?? 0) + ratePerS * (loads.cycleExcess[offset + at] ?? 0);
+    }
+  });
+  const load = cellLoad(converter, weighGroups(mean, 0, given.meanFactors));
+  const temperature = { temperatureC: meanC, amplitudeK };
+  const ratePerS = selfDischargeRatePerS({
+    lossPerYear: lossPerYear.typical,
+    referenceC,
+    q10,
+    activationEnergyJPerMol,
+    ...temperature,
+  });
+  return {
+    load,
+    selfDischargePerS: Math.min(ratePerS, FASTEST_LOSS_PER_S),
+    pieces: meanPieces(source, load, converter.sight, given),
+  };
+}
+
+/**
+ * What decides at a temperature whether the node works.
+ *
+ * @param compiled The scenario.
+ * @param lists Candidates of the dekad.
+ * @param temperatureC Temperature, °C.
+ * @returns The conditions.
+ * @example testConditions(compiled, lists, -20).capacityFactor
+ */
+export function testConditions(
+  compiled: CompiledScenario,
+  lists: DekadLoad['lists'],
+  temperatureC: number,
+): TestConditions {
+  const { scenario, pack } = compiled;
+  const { cell, lowBattery } = scenario.supply;
+  return {
+    temperatureC,
+    capacityFactor: capacityTemperatureFactor(cell.capacityFactorByTemperature, temperatureC),
+    openCircuitShiftV: pack.openCircuitFactor * openCircuitShiftV(cell, temperatureC),
+    cases: testCases(compiled, lists.all, temperatureC),
+    restCases: lowBattery?.readAt === 'rest' ? testCases(compiled, lists.rest, temperatureC) : [],
+  };
+}
+
+/**
+ * Candidates at a temperature.
+ *
+ * @param compiled The scenario.
+ * @param candidates The candidates.
+ * @param temperatureC Temperature, °C.
+ * @returns Loads, limits and resistances.
+ * @example testCases(compiled, lists.all, 20)
+ */
+export function testCases(
+  { loads, converter, scenario }: CompiledScenario,
+  candidates: readonly Candidate[],
+  temperatureC: number,
+): TestCase[] {
+  const factors = groupFactors(loads.groups, temperatureC, 0);
+  const { resistanceFactorByTemperature } = scenario.supply.cell;
+  const resistanceFactor = resistanceTemperatureFactor(resistanceFactorByTemperature, temperatureC);
+  return candidates.map((candidate) => ({
+    load: cellLoad(converter, weighGroups(candidate.vector, 0, factors)),
+    limitV: candidate.limitV,
+    ohm: candidate.freshOhm * resistanceFactor,
+    candidate,
+  }));
+}

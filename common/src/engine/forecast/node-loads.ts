@@ -1,0 +1,107 @@
+import type { Interval, NodeProgram } from '../node/node-program.types.ts';
+import { addDraw, groupOf, GROUP_WIDTH, temperatureGroups } from './load-vector.ts';
+import type { TemperatureGroup } from './load-vector.ts';
+
+/** What a node draws, as load vectors: rest with leakages, each routine's cycle and each interval in excess of rest. */
+export interface NodeLoads {
+  groups: TemperatureGroup[];
+  /** Numbers per vector. */
+  width: number;
+  /** All parts at rest, and leakages. */
+  rest: Float64Array;
+  /** Charge per cycle in excess of rest by routine: the vectors times s. */
+  cycleExcess: Float64Array;
+  intervals: IntervalLoad[];
+  /** Lowest rail voltage of all parts at rest, V, and the part that sets it (−1: none). */
+  restLimit: RailLimit;
+}
+
+export interface RailLimit {
+  railV: number;
+  /** Index into NodeProgram.parts; −1 where no part sets it. */
+  partIndex: number;
+}
+
+export interface IntervalLoad {
+  interval: Interval;
+  routineIndex: number;
+  excess: Float64Array;
+  limit: RailLimit;
+}
+
+/**
+ * Turns a compiled node into load vectors.
+ *
+ * @param program A compiled node.
+ * @returns Its loads.
+ * @example nodeLoads(compileNode(node, { defaultReferenceVoltageV: 3 }))
+ */
+export function nodeLoads(program: NodeProgram): NodeLoads {
+  const groups = temperatureGroups(program);
+  const width = groups.length * GROUP_WIDTH;
+  const rest = new Float64Array(width);
+  const draws = [...program.parts.map(({ restDraw }) => restDraw), ...program.leakages.map(({ draw }) => draw)];
+  for (const draw of draws) addDraw(rest, 0, { draw, group: groupOf(groups, draw) }, 1);
+  const loads = { groups, width, rest, restLimit: restLimitOf(program) };
+  return { ...loads, cycleExcess: cycleExcess(program, loads), intervals: intervalLoads(program, loads) };
+}
+
+function cycleExcess(program: NodeProgram, { groups, width }: Pick<NodeLoads, 'groups' | 'width'>): Float64Array {
+  const vectors = new Float64Array(width * program.routines.length);
+  program.routines.forEach(({ segments }, routineIndex) => {
+    const offset = routineIndex * width;
+    for (const { draw, durationTermsS, partIndex } of segments) {
+      let durationS = 0;
+      for (const termS of durationTermsS) durationS += termS;
+      addDraw(vectors, offset, { draw, group: groupOf(groups, draw) }, durationS);
+      const restDraw = program.parts[partIndex]?.restDraw;
+      if (restDraw) addDraw(vectors, offset, { draw: restDraw, group: groupOf(groups, restDraw) }, -durationS);
+    }
+  });
+  return vectors;
+}
+
+function intervalLoads(
+  program: NodeProgram,
+  { groups, width, restLimit }: Pick<NodeLoads, 'groups' | 'width' | 'restLimit'>,
+): IntervalLoad[] {
+  const loads: IntervalLoad[] = [];
+  program.routines.forEach(({ intervals }, routineIndex) => {
+    for (const interval of intervals) {
+      if (!(interval.durationS > 0)) continue;
+      const excess = new Float64Array(width);
+      for (const { partIndex, draw } of interval.occupants) {
+        addDraw(excess, 0, { draw, group: groupOf(groups, draw) }, 1);
+        const restDraw = program.parts[partIndex]?.restDraw;
+        if (restDraw) addDraw(excess, 0, { draw: restDraw, group: groupOf(groups, restDraw) }, -1);
+      }
+      loads.push({ interval, routineIndex, excess, limit: limitOf(program, interval, restLimit) });
+    }
+  });
+  return loads;
+}
+
+function restLimitOf(program: NodeProgram): RailLimit {
+  const limit: RailLimit = { railV: 0, partIndex: -1 };
+  program.parts.forEach(({ restLowestVoltageV }, partIndex) => raise(limit, restLowestVoltageV, partIndex));
+  return limit;
+}
+
+/** Parts that an interval does not occupy rest, and their rest states may have limits too. */
+function limitOf(program: NodeProgram, { occupants }: Interval, restLimit: RailLimit): RailLimit {
+  const limit: RailLimit = { railV: 0, partIndex: -1 };
+  for (const { lowestVoltageV, partIndex } of occupants) raise(limit, lowestVoltageV, partIndex);
+  if (restLimit.railV > limit.railV) {
+    program.parts.forEach(({ restLowestVoltageV }, partIndex) => {
+      if (restLowestVoltageV <= limit.railV) return;
+      if (!occupants.some((occupant) => occupant.partIndex === partIndex)) raise(limit, restLowestVoltageV, partIndex);
+    });
+  }
+  return limit;
+}
+
+function raise(limit: RailLimit, railV: number, partIndex: number): void {
+  if (railV <= limit.railV) return;
+  limit.railV = railV;
+  limit.partIndex = partIndex;
+}

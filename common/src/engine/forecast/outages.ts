@@ -1,0 +1,133 @@
+import { DEKADS, DEKAD_S } from '../climate/dekads.ts';
+import { winterOfLife } from '../climate/winters.ts';
+import { temperatureAtHour } from '../supply/day-average.ts';
+import { DAY_S, HOUR_S } from '#common/units/si.ts';
+import type { CompiledScenario } from './compile-scenario.ts';
+import type { DekadLoad, TestConditions } from './dekad-load.ts';
+import { firstFailure } from './first-failure.ts';
+import type { Outage } from './forecast.types.ts';
+import { testConditions } from './make-dekad-load.ts';
+import type { Run } from './run.types.ts';
+import { HORIZON_S } from './run-mean-current.ts';
+import { walkOn } from './walk.ts';
+import type { Walk } from './walk.ts';
+
+/** The day as twelve pairs of hours of the same temperature, at their middles: 15.5 h and 14.5 h, and so on to 26.5 h and 3.5 h. */
+const PAIRS = 12;
+
+export interface AfterFailure {
+  outages: Outage[];
+  lastReportS: number;
+}
+
+/**
+ * What would follow the first failure if the node recovered each time: it goes on drawing its mean current, is silent in the hours
+ * in which it fails, and reports in the others. An outage lasts while the coldest hour fails; one that lasts over midsummer is told
+ * as two. The day is judged at 24 hours, each at its middle.
+ *
+ * @param compiled The scenario.
+ * @param run Its life, ended by charge or voltage.
+ * @param latestS Nothing is said about later times, s: the end of shelf life.
+ * @returns Outages up to the last possible report, and that report, s.
+ * @example afterFailure(compiled, run, Infinity).lastReportS >= run.endS
+ */
+export function afterFailure(compiled: CompiledScenario, run: Run, latestS: number): AfterFailure {
+  const lastS = Math.min(latestS, HORIZON_S);
+  const state: Walk = { spent: run.spent, timeS: run.endS, spentS: 0, perVoltS: 0, voltS: 0 };
+  const hoursOf = hourConditions(compiled);
+  const silences: Silence[] = [];
+  let lastReportS = run.endS;
+  // A whole year without a report: later ones have less charge, so none follows.
+  for (let dekad = run.dekadOfLife; state.timeS < lastS && state.spent < 1; dekad++) {
+    if (state.timeS - lastReportS > DEKADS * DEKAD_S) break;
+    const load = compiled.dekadLoad((compiled.startDekad + dekad) % DEKADS);
+    const endS = Math.min((dekad + 1) * DEKAD_S, lastS);
+    const passed = passDekad(compiled, { load, startingC: run.startingC, endS, hoursOf }, state);
+    lastReportS = Math.max(lastReportS, passed.lastReportS);
+    if (passed.silence) silences.push({ ...passed.silence, winter: winterOf(compiled, dekad) });
+  }
+  return { outages: outagesOf(silences, lastReportS), lastReportS };
+}
+
+interface Silence {
+  startS: number;
+  endS: number;
+  /** Share of the hours of the day that fail. */
+  share: number;
+  winter: number;
+}
+
+const winterOf = ({ startDekad, winterStart }: CompiledScenario, dekad: number): number =>
+  winterOfLife(startDekad, dekad, winterStart);
+
+/** Conditions of the twelve pairs of hours of a dekad, made when first asked for. */
+function hourConditions(compiled: CompiledScenario): (load: DekadLoad) => TestConditions[] {
+  const known: TestConditions[][] = [];
+  return (load) => {
+    const { dekadOfYear, meanC, amplitudeK, coldestC } = load.dekad;
+    const found = known[dekadOfYear];
+    if (found) return found;
+    const made = Array.from({ length: PAIRS }, (_, pair) => {
+      const hourC = temperatureAtHour(meanC, amplitudeK, 15.5 + pair);
+      // A coldest night deepens the cold half of the day.
+      const nightC = temperatureAtHour(meanC, meanC - coldestC, 15.5 + pair);
+      return testConditions(compiled, load.lists, hourC < meanC ? nightC : hourC);
+    });
+    known[dekadOfYear] = made;
+    return made;
+  };
+}
+
+interface Passage {
+  load: DekadLoad;
+  startingC: number;
+  endS: number;
+  hoursOf: (load: DekadLoad) => TestConditions[];
+}
+
+/** Goes on to the end of a dekad, with its silence from the moment in which its coldest hour fails. */
+function passDekad(
+  compiled: CompiledScenario,
+  { load, startingC, endS, hoursOf }: Passage,
+  state: Walk,
+): { silence: Omit<Silence, 'winter'> | null; lastReportS: number } {
+  const { source, converter } = compiled;
+  const start = { ...state };
+  walkOn(load.mean, startingC, { timeS: endS - start.timeS, spent: 1 }, state);
+  state.timeS = endS;
+  const range = { fromSpent: start.spent, toSpent: Math.max(start.spent, state.spent) };
+  const cold = firstFailure(source, load.cold, converter.sight, range);
+  if (!cold) return { silence: null, lastReportS: endS };
+  const timeAt = (spent: number): number => {
+    const until = { ...start };
+    walkOn(load.mean, startingC, { timeS: endS - start.timeS, spent }, until);
+    return until.timeS;
+  };
+  const failing = hoursOf(load).map((conditions) => firstFailure(source, conditions, converter.sight, range));
+  const startS = timeAt(cold.spent);
+  const middle = (cold.spent + range.toSpent) / 2;
+  const silent = failing.filter((failure) => failure !== null && failure.spent <= middle).length;
+  // An hour that works at the beginning of the dekad still reports in it.
+  const reports = failing.map((failure) =>
+    failure === null ? endS : failure.spent > range.fromSpent ? timeAt(failure.spent) : 0,
+  );
+  return { silence: { startS, endS, share: silent / PAIRS }, lastReportS: Math.max(startS, ...reports) };
+}
+
+/** Joins silences that follow each other within a winter, up to the last report. */
+function outagesOf(silences: readonly Silence[], lastReportS: number): Outage[] {
+  const outages: Outage[] = [];
+  for (const { startS, endS, share, winter } of silences) {
+    if (startS >= lastReportS) break;
+    const untilS = Math.min(endS, lastReportS);
+    const hours = (share * (untilS - startS)) / HOUR_S;
+    const last = outages.at(-1);
+    if (last && last.winter === winter && startS - last.endS < DAY_S / 24) {
+      last.endS = untilS;
+      last.hours += hours;
+    } else {
+      outages.push({ winter, startS, endS: untilS, hours });
+    }
+  }
+  return outages;
+}
