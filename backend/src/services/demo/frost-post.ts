@@ -159,7 +159,7 @@ const twoAlkaline: Supply = {
 
 const withWarning = (supply: Supply, thresholdV: number): Supply => ({
   ...supply,
-  lowBattery: { thresholdV, stepV: 0.05, hysteresisV: 0.1, readAt: 'rest', readingsPerDay: 4 },
+  lowBattery: { thresholdV, stepV: 0.05, hysteresisV: 0.1, readAt: 'critical', readingsPerDay: 4 },
 });
 
 function document(name: string, frostNode: Node, supply: Supply): Scenario {
@@ -176,7 +176,7 @@ function document(name: string, frostNode: Node, supply: Supply): Scenario {
 const LR6_NAME = 'Two LR6, report every 15 min';
 const ER_NAME = 'One ER14505';
 const draft = node({ excitation: '5 s', reportEveryS: 900 });
-const shortened = node({ excitation: '2.8 s', reportEveryS: 900 });
+const shortened = node({ excitation: '2.7 s', reportEveryS: 900 });
 const oneLithium: Supply = { ...twoAlkaline, cell: catalogueCell('ER14505'), series: 1 };
 
 export const FROST_POST: DemoProject = {
@@ -197,9 +197,9 @@ export const FROST_POST: DemoProject = {
           document: document(LR6_NAME, draft, twoAlkaline),
         },
         {
-          note: 'Excite the leaf grid for 2.8 s instead of 5 s. Low-battery warning set.',
+          note: 'Excite the leaf grid for 2.7 s instead of 5 s. Low-battery warning at 2.45 V, read while sending.',
           author: 'owner',
-          document: document(LR6_NAME, shortened, withWarning(twoAlkaline, 2.25)),
+          document: document(LR6_NAME, shortened, withWarning(twoAlkaline, 2.45)),
         },
       ],
     },
@@ -213,7 +213,7 @@ export const FROST_POST: DemoProject = {
         {
           note: 'Report once an hour: the mean falls, the pulse in the cold does not.',
           author: 'engineer',
-          document: document(ER_NAME, node({ excitation: '2.8 s', reportEveryS: 3_600 }), oneLithium),
+          document: document(ER_NAME, node({ excitation: '2.7 s', reportEveryS: 3_600 }), oneLithium),
         },
       ],
     },

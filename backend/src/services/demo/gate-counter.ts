@@ -149,11 +149,11 @@ export const GATE_COUNTER: DemoProject = {
           document: document(node('400 … 600 … 800 ms'), oneCell),
         },
         {
-          note: 'Low-battery warning at 2.6 V.',
+          note: 'Low-battery warning at 2.75 V.',
           author: 'engineer',
           document: document(node('400 … 600 … 800 ms'), {
             ...oneCell,
-            lowBattery: { thresholdV: 2.6, stepV: 0.05, hysteresisV: 0.1, readAt: 'rest' },
+            lowBattery: { thresholdV: 2.75, stepV: 0.05, hysteresisV: 0.1, readAt: 'rest' },
           }),
         },
       ],

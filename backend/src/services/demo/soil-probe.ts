@@ -149,7 +149,7 @@ export const SOIL_PROBE: DemoProject = {
           document: document(COIN_NAME, final, coin),
         },
         {
-          note: 'Low-battery warning at 2.4 V, to see whether it comes in time.',
+          note: 'Low-battery warning at 2.4 V, to see whether it comes in time. It reads the regulated rail and stays silent.',
           author: 'owner',
           document: document(COIN_NAME, final, {
             ...coin,
@@ -161,7 +161,7 @@ export const SOIL_PROBE: DemoProject = {
     {
       revisions: [
         {
-          note: 'The same node on two LR6, without the regulator being the limit.',
+          note: 'The same node on two LR6, which outlast the three years wanted.',
           author: 'engineer',
           document: document('Two LR6 behind the same regulator', final, {
             ...coin,
