@@ -33,7 +33,14 @@ export function QuantityInput({ options, isOptional = false, check, ...props }: 
       placeholder={isOptional ? undefined : exampleOf(options.dimension)}
       {...props}
       parse={parse}
-      format={(value) => (value === undefined ? '' : formatForEdit(value, options.dimension, options.defaultUnit))}
+      format={(value) => (value === undefined ? '' : figureText(value, options))}
     />
   );
+}
+
+/** A figure as its field writes it: in the unit that gives the shortest number, zero and charges in the field's own. */
+export function figureText(value: number, { dimension, defaultUnit }: ParseOptions): string {
+  return value === 0 || dimension === 'charge'
+    ? formatForEdit(value, dimension, defaultUnit)
+    : formatForEdit(value, dimension);
 }

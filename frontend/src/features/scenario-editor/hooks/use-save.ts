@@ -1,4 +1,4 @@
-import { useQueryClient } from '@tanstack/react-query';
+import { useQueryClient, type QueryClient } from '@tanstack/react-query';
 import { useCallback, useEffect, useRef, useState } from 'react';
 import { scenarioDetailSchema, type ScenarioDetail } from '#common/schemas/api/scenarios.ts';
 import type { InputProblem } from '#common/schemas/problem.ts';
@@ -50,9 +50,7 @@ export function useSave(store: EditorStore, scenarioId: string): Saving {
         // The stored document is the one sent, apart from key order.
         store.markSaved({ ...savedOf(detail), document });
         note.current = '';
-        client.setQueryData(scenarioQuery(scenarioId).queryKey, detail);
-        void client.invalidateQueries({ queryKey: [REVISIONS_KEY, scenarioId, 'list'] });
-        void client.invalidateQueries({ queryKey: ['scenarios', 'list'] });
+        showSaved(client, detail);
         setStatus({ kind: 'idle' });
       } catch (error) {
         setStatus(statusOf(error));
@@ -98,6 +96,12 @@ export function useSave(store: EditorStore, scenarioId: string): Saving {
     },
     dismiss: () => setStatus({ kind: 'idle' }),
   };
+}
+
+function showSaved(client: QueryClient, detail: ScenarioDetail): void {
+  client.setQueryData(scenarioQuery(detail.id).queryKey, detail);
+  void client.invalidateQueries({ queryKey: [REVISIONS_KEY, detail.id, 'list'] });
+  void client.invalidateQueries({ queryKey: ['scenarios', 'list'] });
 }
 
 function statusOf(error: unknown): SaveStatus {

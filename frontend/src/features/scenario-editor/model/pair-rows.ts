@@ -4,7 +4,7 @@ import type { ParseOptions } from '#common/units/parse-quantity.ts';
 
 /** Why a first value cannot stand in this row; the first column rises from row to row. Null when it can. */
 export function risingProblem(table: Table, index: number, value: number, options: ParseOptions): string | null {
-  const show = (limit: number): string => formatForEdit(limit, options.dimension, options.defaultUnit);
+  const show = (limit: number): string => formatForEdit(limit, options.dimension);
   const before = table[index - 1]?.[0];
   const after = table[index + 1]?.[0];
   if (before !== undefined && value <= before) return `Rows rise: more than ${show(before)} here.`;

@@ -34,7 +34,7 @@ export function kindOf(quantity: Pick<Quantity, 'provenance'>): Provenance['kind
 
 /** Why a side may not have this value beside the others; null when it may. */
 export function orderProblem(quantity: Quantity, side: Side, value: number, options: ParseOptions): string | null {
-  const show = (limit: number): string => formatForEdit(limit, options.dimension, options.defaultUnit);
+  const show = (limit: number): string => formatForEdit(limit, options.dimension);
   const { min, typical, max } = quantity;
   if (side === 'min' && value > typical) return `The minimum lies above the typical ${show(typical)}.`;
   if (side === 'max' && value < typical) return `The maximum lies below the typical ${show(typical)}.`;

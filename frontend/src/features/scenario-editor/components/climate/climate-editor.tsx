@@ -3,15 +3,24 @@ import type { LibraryItem } from '#common/schemas/api/library.ts';
 import { formatQuantity } from '#common/units/format-quantity.ts';
 import { Button } from '#frontend/components/button.tsx';
 import { Dialog } from '#frontend/components/dialog.tsx';
-import { useDocument, useEditorStore, useIsReadOnly } from '../../hooks/editor-context.tsx';
-import { CURRENT, RETURN_YEARS, STORAGE_TIME, TEMPERATURE } from '../../model/figure-options.ts';
-import { applyClimate, updateClimate, withOptional } from '../../model/operations/supply-operations.ts';
-import { MONTHS } from '../../model/words.ts';
+import {
+  useDocument,
+  useEditorStore,
+  useIsReadOnly,
+} from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import { RETURN_YEARS, TEMPERATURE } from '#frontend/features/scenario-editor/model/figure-options.ts';
+import {
+  applyClimate,
+  updateClimate,
+  withOptional,
+} from '#frontend/features/scenario-editor/model/operations/supply-operations.ts';
+import { MONTHS } from '#frontend/features/scenario-editor/model/words.ts';
 import { FigureField } from '../fields/bound-fields.tsx';
 import { ChoiceField } from '../fields/choice-field.tsx';
 import { LibraryPicker } from '../library-picker.tsx';
 import { Section } from '../node/section.tsx';
 import { MonthsTable } from './months-table.tsx';
+import { StorageFields } from './storage-fields.tsx';
 
 /** The temperatures that a node lives in, and where it lay before. */
 export function ClimateEditor() {
@@ -138,61 +147,5 @@ function ExtremeFields({ side, label }: { side: 'coldest' | 'hottest'; label: st
         <div className="hidden sm:col-span-2 sm:block" />
       )}
     </>
-  );
-}
-
-function StorageFields() {
-  const storage = useDocument(({ climate }) => climate.storage);
-  const field = 'climate.storage';
-  return (
-    <div className="grid grid-cols-2 gap-x-6 sm:grid-cols-4">
-      <FigureField
-        field={`${field}.durationS`}
-        label="Stored for"
-        hint="empty: not stored"
-        value={storage?.durationS}
-        options={STORAGE_TIME}
-        isOptional
-        change={(document, durationS) =>
-          updateClimate(document, (climate) =>
-            withOptional(
-              climate,
-              'storage',
-              durationS === undefined
-                ? undefined
-                : { ...(climate.storage ?? { temperatureC: 20, currentA: 0 }), durationS },
-            ),
-          )
-        }
-      />
-      {storage && (
-        <>
-          <FigureField
-            field={`${field}.temperatureC`}
-            label="At"
-            editLabel="temperature in storage"
-            value={storage.temperatureC}
-            options={TEMPERATURE}
-            change={(document, temperatureC = 20) =>
-              updateClimate(document, (climate) =>
-                climate.storage ? { ...climate, storage: { ...climate.storage, temperatureC } } : climate,
-              )
-            }
-          />
-          <FigureField
-            field={`${field}.currentA`}
-            label="Drawing"
-            editLabel="current in storage"
-            value={storage.currentA}
-            options={CURRENT}
-            change={(document, currentA = 0) =>
-              updateClimate(document, (climate) =>
-                climate.storage ? { ...climate, storage: { ...climate.storage, currentA } } : climate,
-              )
-            }
-          />
-        </>
-      )}
-    </div>
   );
 }

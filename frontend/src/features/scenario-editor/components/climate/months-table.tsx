@@ -1,10 +1,10 @@
 import { memo, useState } from 'react';
 import type { ClimateMonth } from '#common/engine/scenario/scenario.types.ts';
 import { MONTH_NAMES } from '#common/units/format-duration.ts';
-import { useDocument } from '../../hooks/editor-context.tsx';
-import { SWING, TEMPERATURE } from '../../model/figure-options.ts';
-import { updateMonth } from '../../model/operations/supply-operations.ts';
-import { monthsPasteTarget } from '../../model/paste/months-paste.ts';
+import { useDocument } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import { SWING, TEMPERATURE } from '#frontend/features/scenario-editor/model/figure-options.ts';
+import { updateMonth } from '#frontend/features/scenario-editor/model/operations/supply-operations.ts';
+import { monthsPasteTarget } from '#frontend/features/scenario-editor/model/paste/months-paste.ts';
 import { FigureField } from '../fields/bound-fields.tsx';
 import { EditGrid, GridCell, GridRow, PINNED_CELL, type PastedBlock } from '../grid/edit-grid.tsx';
 import { PasteDialog } from '../paste/paste-dialog.tsx';

@@ -1,11 +1,10 @@
 import type { ReactNode } from 'react';
 import { LIMITS } from '#common/schemas/limits.ts';
 import type { Scenario } from '#common/engine/scenario/scenario.types.ts';
-import { formatForEdit } from '#common/units/format-for-edit.ts';
 import type { ParseOptions } from '#common/units/parse-quantity.ts';
 import { ParsedInput, type Parsed } from '#frontend/components/quantity-input-text.tsx';
-import { QuantityInput } from '#frontend/components/quantity-input.tsx';
-import { useEditorStore, useField, useIsReadOnly } from '../../hooks/editor-context.tsx';
+import { figureText, QuantityInput } from '#frontend/components/quantity-input.tsx';
+import { useEditorStore, useField, useIsReadOnly } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
 
 export interface BoundProps {
   /** Key of the field, see `model/fields.ts`. */
@@ -33,7 +32,7 @@ export function FigureField({ value, options, change, editLabel, isOptional, che
   const store = useEditorStore();
   const bound = useField(props.field);
   if (useIsReadOnly()) {
-    const text = value === undefined ? '' : formatForEdit(value, options.dimension, options.defaultUnit);
+    const text = value === undefined ? '' : figureText(value, options);
     return <PlainText {...props} text={text} />;
   }
   return (

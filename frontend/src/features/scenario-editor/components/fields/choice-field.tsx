@@ -1,6 +1,10 @@
 import { useId } from 'react';
 import type { Scenario } from '#common/engine/scenario/scenario.types.ts';
-import { useEditorStore, useFieldProblem, useIsReadOnly } from '../../hooks/editor-context.tsx';
+import {
+  useEditorStore,
+  useFieldProblem,
+  useIsReadOnly,
+} from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
 import { PlainText } from './bound-fields.tsx';
 
 export interface Choice<T extends string> {
@@ -47,7 +51,7 @@ export function ChoiceField<T extends string>(props: ChoiceFieldProps<T>) {
         aria-invalid={problem === undefined ? undefined : true}
         aria-describedby={problem === undefined && hint === undefined ? undefined : `${id}-note`}
         onChange={(event) => handleChange(event.target.value)}
-        className={isCell ? CELL : LINE}
+        className={`${isCell ? CELL : LINE} ${isCell && value === '' ? 'text-muted' : ''}`}
       >
         {choices.map((choice) => (
           <option key={choice.value} value={choice.value}>

@@ -4,9 +4,9 @@ import { LIMITS } from '#common/schemas/limits.ts';
 import { Button } from '#frontend/components/button.tsx';
 import { Dialog, DialogActions } from '#frontend/components/dialog.tsx';
 import { SelectField, TextArea } from '#frontend/components/field.tsx';
-import { useEditorStore, useIsReadOnly } from '../../hooks/editor-context.tsx';
-import { kindOf } from '../../model/quantity-sides.ts';
-import { PROVENANCE_KINDS, provenanceWord } from '../../model/words.ts';
+import { useEditorStore, useIsReadOnly } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import { kindOf } from '#frontend/features/scenario-editor/model/quantity-sides.ts';
+import { PROVENANCE_KINDS, provenanceWord } from '#frontend/features/scenario-editor/model/words.ts';
 
 export type ChangeQuantity = (document: Scenario, update: (quantity: Quantity) => Quantity) => Scenario;
 

@@ -1,7 +1,7 @@
 import { useState } from 'react';
 import type { Quantity } from '#common/engine/scenario/scenario.types.ts';
 import type { ParseOptions } from '#common/units/parse-quantity.ts';
-import { orderProblem, withSide, type Side } from '../../model/quantity-sides.ts';
+import { orderProblem, withSide, type Side } from '#frontend/features/scenario-editor/model/quantity-sides.ts';
 import { GridCell } from '../grid/edit-grid.tsx';
 import { FigureField } from './bound-fields.tsx';
 import { ProvenanceMark, type ChangeQuantity } from './provenance-mark.tsx';

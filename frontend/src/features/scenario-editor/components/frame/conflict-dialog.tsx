@@ -4,8 +4,8 @@ import type { ScenarioDetail } from '#common/schemas/api/scenarios.ts';
 import { Button } from '#frontend/components/button.tsx';
 import { Dialog, DialogActions } from '#frontend/components/dialog.tsx';
 import { dateAndTime } from '#frontend/lib/dates.ts';
-import { useEditorState } from '../../hooks/editor-context.tsx';
-import type { Saving } from '../../hooks/use-save.ts';
+import { useEditorState } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import type { Saving } from '#frontend/features/scenario-editor/hooks/use-save.ts';
 import { ChangeList } from '../revisions/change-list.tsx';
 
 /** Someone saved in between: shows both sides and lets the person choose. Neither choice loses anything. */

@@ -1,9 +1,9 @@
 import { TextButton } from '#frontend/components/button.tsx';
 import { dateAndTime } from '#frontend/lib/dates.ts';
-import { useEditorStore } from '../../hooks/editor-context.tsx';
-import type { Saving } from '../../hooks/use-save.ts';
-import { fieldOfPath } from '../../model/fields.ts';
-import type { KeptWork } from '../../model/opening.ts';
+import { useEditorStore } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import type { Saving } from '#frontend/features/scenario-editor/hooks/use-save.ts';
+import { fieldOfPath } from '#frontend/features/scenario-editor/model/fields.ts';
+import type { KeptWork } from '#frontend/features/scenario-editor/model/opening.ts';
 
 interface KeptWorkNoticeProps {
   kept: KeptWork;

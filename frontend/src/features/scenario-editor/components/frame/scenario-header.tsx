@@ -4,9 +4,14 @@ import { Dialog, DialogActions } from '#frontend/components/dialog.tsx';
 import { TextArea } from '#frontend/components/field.tsx';
 import { dateAndTime, dayOrTime } from '#frontend/lib/dates.ts';
 import { LIMITS } from '#common/schemas/limits.ts';
-import { useDocument, useEditorState, useEditorStore, useIsReadOnly } from '../../hooks/editor-context.tsx';
-import type { Saving } from '../../hooks/use-save.ts';
-import { isDirty } from '../../model/editor-state.ts';
+import {
+  useDocument,
+  useEditorState,
+  useEditorStore,
+  useIsReadOnly,
+} from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import type { Saving } from '#frontend/features/scenario-editor/hooks/use-save.ts';
+import { isDirty } from '#frontend/features/scenario-editor/model/editor-state.ts';
 import { TextFieldOf } from '../fields/bound-fields.tsx';
 
 interface ScenarioHeaderProps {

@@ -65,7 +65,7 @@ export function EditGrid({ label, columns, fieldPrefix, children, footer, ...han
                 <th
                   key={column.key}
                   scope="col"
-                  style={{ minWidth: column.width, width: column.width }}
+                  style={{ minWidth: index === 0 ? `min(${column.width}, 38vw)` : column.width, width: column.width }}
                   className={`px-1.5 py-1.5 text-small font-normal text-muted ${column.isNumber ? 'text-right' : ''} ${index === 0 ? PINNED : ''}`}
                 >
                   {column.header}
@@ -111,7 +111,7 @@ export function GridNameCell({ children }: { children: ReactNode }) {
     <th
       scope="row"
       data-col="name"
-      className={`${PINNED} max-w-44 min-w-28 p-0 font-normal group-data-selected/row:bg-accent-soft group-data-selected/row:font-semibold`}
+      className={`${PINNED} max-w-56 min-w-28 p-0 font-normal group-data-selected/row:bg-accent-soft group-data-selected/row:font-semibold`}
     >
       {children}
     </th>

@@ -1,4 +1,4 @@
-import { useEditorState, useProblems } from '../../hooks/editor-context.tsx';
+import { useEditorState, useProblems } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
 
 /** What is wrong in a table, in a place that is always there: nothing below it moves. */
 export function GridMessage({ fieldPrefix }: { fieldPrefix: string }) {

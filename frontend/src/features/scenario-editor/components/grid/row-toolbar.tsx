@@ -1,4 +1,4 @@
-import { useIsReadOnly } from '../../hooks/editor-context.tsx';
+import { useIsReadOnly } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
 
 interface RowToolbarProps {
   /** Name of the selected row; null when none is. */

@@ -2,9 +2,13 @@ import type { Part, PartKind } from '#common/engine/scenario/scenario.types.ts';
 import type { LibraryItem } from '#common/schemas/api/library.ts';
 import { Button } from '#frontend/components/button.tsx';
 import { Dialog } from '#frontend/components/dialog.tsx';
-import { useEditorStore } from '../../hooks/editor-context.tsx';
-import { addPart, emptyPart, idOfNewPart } from '../../model/operations/part-operations.ts';
-import { PART_KINDS } from '../../model/words.ts';
+import { useEditorStore } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import {
+  addPart,
+  emptyPart,
+  idOfNewPart,
+} from '#frontend/features/scenario-editor/model/operations/part-operations.ts';
+import { PART_KINDS } from '#frontend/features/scenario-editor/model/words.ts';
 import { LibraryPicker } from '../library-picker.tsx';
 
 /** Adds a part: a copy of one in the library or the catalogue, or an empty one of a kind. */

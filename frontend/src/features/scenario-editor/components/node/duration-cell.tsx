@@ -2,10 +2,10 @@ import type { Step } from '#common/engine/scenario/scenario.types.ts';
 import { EngineError } from '#common/errors.ts';
 import { stepDuration } from '#common/engine/link/step-duration.ts';
 import { formatDuration } from '#common/units/format-duration.ts';
-import { useDocument, useFieldProblem } from '../../hooks/editor-context.tsx';
-import { STEP_TIME } from '../../model/figure-options.ts';
-import { updateStep } from '../../model/operations/routine-operations.ts';
-import { orderProblem, withSide } from '../../model/quantity-sides.ts';
+import { useDocument, useFieldProblem } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import { STEP_TIME } from '#frontend/features/scenario-editor/model/figure-options.ts';
+import { updateStep } from '#frontend/features/scenario-editor/model/operations/routine-operations.ts';
+import { orderProblem, withSide } from '#frontend/features/scenario-editor/model/quantity-sides.ts';
 import { FigureField } from '../fields/bound-fields.tsx';
 
 /** Duration of a step: typed, or derived from the link or a serial transfer and then only shown here. */

@@ -1,5 +1,5 @@
 import { Menu } from '#frontend/components/menu.tsx';
-import { useIsReadOnly } from '../../hooks/editor-context.tsx';
+import { useIsReadOnly } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
 
 interface ItemActionsProps {
   name: string;

@@ -1,11 +1,16 @@
 import { memo, useState } from 'react';
 import type { Leakage } from '#common/engine/scenario/scenario.types.ts';
 import { LIMITS } from '#common/schemas/limits.ts';
-import { useDocument, useEditorStore } from '../../hooks/editor-context.tsx';
-import { useRemoval } from '../../hooks/use-removal.ts';
-import { CURRENT } from '../../model/figure-options.ts';
-import { uniqueId, uniqueName } from '../../model/ids.ts';
-import { addLeakage, moveLeakage, removeLeakage, updateLeakage } from '../../model/operations/part-operations.ts';
+import { useDocument, useEditorStore } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import { useRemoval } from '#frontend/features/scenario-editor/hooks/use-removal.ts';
+import { CURRENT } from '#frontend/features/scenario-editor/model/figure-options.ts';
+import { uniqueId, uniqueName } from '#frontend/features/scenario-editor/model/ids.ts';
+import {
+  addLeakage,
+  moveLeakage,
+  removeLeakage,
+  updateLeakage,
+} from '#frontend/features/scenario-editor/model/operations/part-operations.ts';
 import { TextFieldOf } from '../fields/bound-fields.tsx';
 import { QuantityCells } from '../fields/quantity-fields.tsx';
 import { EditGrid, GridNameCell, GridRow, type GridColumn } from '../grid/edit-grid.tsx';

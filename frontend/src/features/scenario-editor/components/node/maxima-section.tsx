@@ -4,8 +4,12 @@ import type { Dimension } from '#common/units/dimensions.table.ts';
 import { formatQuantity } from '#common/units/format-quantity.ts';
 import { Button } from '#frontend/components/button.tsx';
 import { QuantityInput } from '#frontend/components/quantity-input.tsx';
-import { useEditorState, useEditorStore, useIsReadOnly } from '../../hooks/editor-context.tsx';
-import { assumeMaxima, missingMaxima, type FigureKind } from '../../model/quantities.ts';
+import {
+  useEditorState,
+  useEditorStore,
+  useIsReadOnly,
+} from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import { assumeMaxima, missingMaxima, type FigureKind } from '#frontend/features/scenario-editor/model/quantities.ts';
 import { Section } from './section.tsx';
 
 const DIMENSION_OF: Record<FigureKind, Dimension> = {

@@ -2,11 +2,19 @@ import { useState } from 'react';
 import type { InputProblem } from '#common/schemas/problem.ts';
 import { Button } from '#frontend/components/button.tsx';
 import { QuantityInput } from '#frontend/components/quantity-input.tsx';
-import { useDocument, useEditorStore, useIsReadOnly } from '../../hooks/editor-context.tsx';
-import { CURRENT, STEP_TIME } from '../../model/figure-options.ts';
-import { missingMoves, type MissingLink, type MissingMove } from '../../model/missing-moves.ts';
-import { addTransition } from '../../model/operations/part-operations.ts';
-import { useEditorState } from '../../hooks/editor-context.tsx';
+import {
+  useDocument,
+  useEditorStore,
+  useIsReadOnly,
+} from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import { CURRENT, STEP_TIME } from '#frontend/features/scenario-editor/model/figure-options.ts';
+import {
+  missingMoves,
+  type MissingLink,
+  type MissingMove,
+} from '#frontend/features/scenario-editor/model/missing-moves.ts';
+import { addTransition } from '#frontend/features/scenario-editor/model/operations/part-operations.ts';
+import { useEditorState } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
 
 /** Moves that a routine asks for and its parts cannot make, each with the transition that would make it possible. */
 export function MissingMoves({ problems }: { problems: readonly InputProblem[] }) {

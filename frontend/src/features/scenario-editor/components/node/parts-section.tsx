@@ -2,18 +2,22 @@ import { useState } from 'react';
 import type { Part } from '#common/engine/scenario/scenario.types.ts';
 import { LIMITS } from '#common/schemas/limits.ts';
 import { ConfirmDialog } from '#frontend/components/confirm-dialog.tsx';
-import { useDocument, useEditorState, useEditorStore } from '../../hooks/editor-context.tsx';
-import { useRemoval } from '../../hooks/use-removal.ts';
-import { VOLTAGE } from '../../model/figure-options.ts';
+import {
+  useDocument,
+  useEditorState,
+  useEditorStore,
+} from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import { useRemoval } from '#frontend/features/scenario-editor/hooks/use-removal.ts';
+import { VOLTAGE } from '#frontend/features/scenario-editor/model/figure-options.ts';
 import {
   duplicatePart,
   idOfNewPart,
   movePart,
   removePart,
   updatePart,
-} from '../../model/operations/part-operations.ts';
-import { usesOf } from '../../model/references.ts';
-import { PART_KINDS } from '../../model/words.ts';
+} from '#frontend/features/scenario-editor/model/operations/part-operations.ts';
+import { usesOf } from '#frontend/features/scenario-editor/model/references.ts';
+import { PART_KINDS } from '#frontend/features/scenario-editor/model/words.ts';
 import { TextFieldOf } from '../fields/bound-fields.tsx';
 import { ChoiceField } from '../fields/choice-field.tsx';
 import { QuantityField } from '../fields/quantity-fields.tsx';

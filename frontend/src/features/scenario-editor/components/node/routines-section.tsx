@@ -1,8 +1,13 @@
 import type { InputProblem } from '#common/schemas/problem.ts';
 import type { Routine } from '#common/engine/scenario/scenario.types.ts';
 import { LIMITS } from '#common/schemas/limits.ts';
-import { useDocument, useEditorState, useEditorStore, useIsReadOnly } from '../../hooks/editor-context.tsx';
-import { useRemoval } from '../../hooks/use-removal.ts';
+import {
+  useDocument,
+  useEditorState,
+  useEditorStore,
+  useIsReadOnly,
+} from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import { useRemoval } from '#frontend/features/scenario-editor/hooks/use-removal.ts';
 import {
   addRoutine,
   duplicateRoutine,
@@ -11,8 +16,8 @@ import {
   moveRoutine,
   removeRoutine,
   updateRoutine,
-} from '../../model/operations/routine-operations.ts';
-import { scheduleWords } from '../../model/words.ts';
+} from '#frontend/features/scenario-editor/model/operations/routine-operations.ts';
+import { scheduleWords } from '#frontend/features/scenario-editor/model/words.ts';
 import { TextFieldOf } from '../fields/bound-fields.tsx';
 import { MissingMoves } from './missing-moves.tsx';
 import { PickList } from './pick-list.tsx';

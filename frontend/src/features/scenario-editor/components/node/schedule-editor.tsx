@@ -1,11 +1,15 @@
 import type { Routine, Schedule, When } from '#common/engine/scenario/scenario.types.ts';
 import { MONTH_NAMES } from '#common/units/format-duration.ts';
-import { useEditorStore, useIsReadOnly } from '../../hooks/editor-context.tsx';
-import { DELAY, HOUR, PER_DAY, PERIOD, TEMPERATURE } from '../../model/figure-options.ts';
-import { scheduleOfKind, updateRoutine } from '../../model/operations/routine-operations.ts';
-import { withOptional } from '../../model/operations/supply-operations.ts';
+import { useEditorStore, useIsReadOnly } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import { TEMPERATURE } from '#frontend/features/scenario-editor/model/figure-options.ts';
+import {
+  scheduleOfKind,
+  updateRoutine,
+} from '#frontend/features/scenario-editor/model/operations/routine-operations.ts';
+import { withOptional } from '#frontend/features/scenario-editor/model/operations/supply-operations.ts';
 import { FigureField } from '../fields/bound-fields.tsx';
 import { ChoiceField } from '../fields/choice-field.tsx';
+import { ScheduleFigures } from './schedule-figures.tsx';
 
 const KINDS: readonly { value: Schedule['kind']; label: string }[] = [
   { value: 'every', label: 'every …' },
@@ -39,96 +43,6 @@ export function ScheduleEditor({ routine }: { routine: Routine }) {
       <Months routine={routine} />
     </div>
   );
-}
-
-type Change = (schedule: Schedule) => Schedule;
-
-function ScheduleFigures({ routine, field }: { routine: Routine; field: string }) {
-  const { schedule, id, name } = routine;
-  const common = (label: string) => ({ label, editLabel: `${label.toLowerCase()} of ${name}` });
-  const change = (apply: Change) => (document: Parameters<typeof updateRoutine>[0]) =>
-    updateRoutine(document, id, (before) => ({ ...before, schedule: apply(before.schedule) }));
-  const period = (
-    <FigureField
-      field={`${field}.periodS`}
-      {...common('Period')}
-      value={schedule.kind === 'every' || schedule.kind === 'window' ? schedule.periodS : undefined}
-      options={PERIOD}
-      change={(document, periodS = 1) =>
-        change((before) => ('periodS' in before ? { ...before, periodS } : before))(document)
-      }
-    />
-  );
-  switch (schedule.kind) {
-    case 'every':
-      return period;
-    case 'window':
-      return (
-        <>
-          {period}
-          <FigureField
-            field={`${field}.fromHour`}
-            {...common('From hour')}
-            value={schedule.fromHour}
-            options={HOUR}
-            change={(document, fromHour = 0) =>
-              change((before) => (before.kind === 'window' ? { ...before, fromHour } : before))(document)
-            }
-          />
-          <FigureField
-            field={`${field}.toHour`}
-            {...common('To hour')}
-            value={schedule.toHour}
-            options={HOUR}
-            change={(document, toHour = 24) =>
-              change((before) => (before.kind === 'window' ? { ...before, toHour } : before))(document)
-            }
-          />
-        </>
-      );
-    case 'random':
-      return (
-        <>
-          <FigureField
-            field={`${field}.meanPerDay`}
-            {...common('On average')}
-            value={schedule.meanPerDay}
-            options={PER_DAY}
-            change={(document, meanPerDay = 0) =>
-              change((before) => (before.kind === 'random' ? { ...before, meanPerDay } : before))(document)
-            }
-          />
-          <FigureField
-            field={`${field}.busiestPerDay`}
-            {...common('On the busiest day')}
-            hint="shown, not counted"
-            value={schedule.busiestPerDay}
-            options={PER_DAY}
-            isOptional
-            change={(document, busiest) =>
-              change((before) => (before.kind === 'random' ? withOptional(before, 'busiestPerDay', busiest) : before))(
-                document,
-              )
-            }
-          />
-        </>
-      );
-    case 'once':
-      return (
-        <FigureField
-          field={`${field}.afterS`}
-          {...common('After')}
-          hint="from the beginning of life"
-          value={schedule.afterS}
-          options={DELAY}
-          change={(document, afterS = 0) =>
-            change((before) => (before.kind === 'once' ? { ...before, afterS } : before))(document)
-          }
-        />
-      );
-    case 'always':
-      return <p className="self-center text-small text-muted">One cycle after the other, without a pause.</p>;
-  }
 }
 
 function withWhen(routine: Routine, apply: (when: When) => When): Routine {

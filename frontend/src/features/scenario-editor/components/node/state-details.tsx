@@ -1,10 +1,19 @@
 import type { LoadLaw, Part, State } from '#common/engine/scenario/scenario.types.ts';
 import type { ParseOptions } from '#common/units/parse-quantity.ts';
-import { useDocument, useEditorStore, useIsReadOnly } from '../../hooks/editor-context.tsx';
-import { DOUBLING, POSITIVE_VOLTAGE, TEMPERATURE, VOLTAGE } from '../../model/figure-options.ts';
-import { updateState } from '../../model/operations/part-operations.ts';
-import { withOptional } from '../../model/operations/supply-operations.ts';
-import { typicalOrNew } from '../../model/quantity-sides.ts';
+import {
+  useDocument,
+  useEditorStore,
+  useIsReadOnly,
+} from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import {
+  DOUBLING,
+  POSITIVE_VOLTAGE,
+  TEMPERATURE,
+  VOLTAGE,
+} from '#frontend/features/scenario-editor/model/figure-options.ts';
+import { updateState } from '#frontend/features/scenario-editor/model/operations/part-operations.ts';
+import { withOptional } from '#frontend/features/scenario-editor/model/operations/supply-operations.ts';
+import { typicalOrNew } from '#frontend/features/scenario-editor/model/quantity-sides.ts';
 import { FigureField } from '../fields/bound-fields.tsx';
 import { ChoiceField } from '../fields/choice-field.tsx';
 import { ProvenanceMark } from '../fields/provenance-mark.tsx';

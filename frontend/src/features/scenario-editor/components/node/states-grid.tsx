@@ -1,34 +1,27 @@
-import { memo, useState } from 'react';
+import { useState } from 'react';
 import type { Part, State } from '#common/engine/scenario/scenario.types.ts';
 import { LIMITS } from '#common/schemas/limits.ts';
 import { ConfirmDialog } from '#frontend/components/confirm-dialog.tsx';
-import { useEditorStore } from '../../hooks/editor-context.tsx';
-import { useRemoval } from '../../hooks/use-removal.ts';
-import { CURRENT } from '../../model/figure-options.ts';
+import { useEditorStore } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import { useRemoval } from '#frontend/features/scenario-editor/hooks/use-removal.ts';
 import {
   addState,
   duplicateState,
   idOfNewState,
   moveState,
   removeState,
-  renameState,
-  updateState,
-} from '../../model/operations/part-operations.ts';
-import { withOptional } from '../../model/operations/supply-operations.ts';
-import { statesPasteTarget } from '../../model/paste/states-paste.ts';
-import { usesOf } from '../../model/references.ts';
-import { ROLES } from '../../model/words.ts';
-import { TextFieldOf } from '../fields/bound-fields.tsx';
-import { ChoiceField } from '../fields/choice-field.tsx';
-import { QuantityCells } from '../fields/quantity-fields.tsx';
-import { EditGrid, GridCell, GridNameCell, GridRow, type GridColumn, type PastedBlock } from '../grid/edit-grid.tsx';
+} from '#frontend/features/scenario-editor/model/operations/part-operations.ts';
+import { statesPasteTarget } from '#frontend/features/scenario-editor/model/paste/states-paste.ts';
+import { usesOf } from '#frontend/features/scenario-editor/model/references.ts';
+import { EditGrid, type GridColumn, type PastedBlock } from '../grid/edit-grid.tsx';
 import { focusOfRow } from '../grid/grid-keys.ts';
 import { RowToolbar } from '../grid/row-toolbar.tsx';
 import { PasteDialog } from '../paste/paste-dialog.tsx';
+import { StateRow } from './state-row.tsx';
 import { StateDetails } from './state-details.tsx';
 
 const COLUMNS: readonly GridColumn[] = [
-  { key: 'name', header: 'State', width: '8.5rem' },
+  { key: 'name', header: 'State', width: '12rem' },
   { key: 'role', header: 'Role', width: '6.5rem' },
   { key: 'min', header: 'Minimum', width: '6rem', isNumber: true },
   { key: 'typical', header: 'Typical', width: '6rem', isNumber: true },
@@ -105,23 +98,40 @@ export function StatesGrid({ part }: { part: Part }) {
       </EditGrid>
       {selected && <StateDetails part={part} state={selected} />}
       {pasted && <PasteDialog block={pasted} target={statesPasteTarget(part.id)} onClose={() => setPasted(null)} />}
-      <ConfirmDialog
-        title={`Remove the state “${asked?.state.name ?? ''}”?`}
-        action="Remove"
-        isDanger
-        isOpen={asked !== null}
-        onClose={close}
-        onConfirm={() => asked && remove(asked.state)}
-      >
-        <p>It is used here, and would be taken out of:</p>
-        <ul className="mt-2 list-disc pl-5">
-          {asked?.uses.slice(0, 8).map((use) => (
-            <li key={use}>{use}</li>
-          ))}
-          {asked && asked.uses.length > 8 && <li>and {asked.uses.length - 8} more</li>}
-        </ul>
-      </ConfirmDialog>
+      <RemovalDialog asked={asked} onClose={close} onConfirm={remove} />
     </>
+  );
+}
+
+interface AskedRemoval {
+  state: State;
+  uses: string[];
+}
+
+interface RemovalDialogProps {
+  asked: AskedRemoval | null;
+  onClose: () => void;
+  onConfirm: (state: State) => void;
+}
+
+function RemovalDialog({ asked, onClose, onConfirm }: RemovalDialogProps) {
+  return (
+    <ConfirmDialog
+      title={`Remove the state “${asked?.state.name ?? ''}”?`}
+      action="Remove"
+      isDanger
+      isOpen={asked !== null}
+      onClose={onClose}
+      onConfirm={() => asked && onConfirm(asked.state)}
+    >
+      <p>It is used here, and would be taken out of:</p>
+      <ul className="mt-2 list-disc pl-5">
+        {asked?.uses.slice(0, 8).map((use) => (
+          <li key={use}>{use}</li>
+        ))}
+        {asked && asked.uses.length > 8 && <li>and {asked.uses.length - 8} more</li>}
+      </ul>
+    </ConfirmDialog>
   );
 }
 
@@ -129,7 +139,7 @@ export function StatesGrid({ part }: { part: Part }) {
 function useStateRemoval(part: Part) {
   const store = useEditorStore();
   const removal = useRemoval();
-  const [asked, setAsked] = useState<{ state: State; uses: string[] } | null>(null);
+  const [asked, setAsked] = useState<AskedRemoval | null>(null);
   const remove = (state: State): void => {
     setAsked(null);
     removal(
@@ -147,51 +157,3 @@ function useStateRemoval(part: Part) {
   };
   return { asked, ask, remove, close: () => setAsked(null) };
 }
-
-interface StateRowProps {
-  partId: string;
-  partName: string;
-  state: State;
-  isSelected: boolean;
-}
-
-const StateRow = memo(function StateRow({ partId, partName, state, isSelected }: StateRowProps) {
-  const field = `node.parts.${partId}.states.${state.id}`;
-  const label = `${partName}, ${state.name}`;
-  return (
-    <GridRow rowId={state.id} isSelected={isSelected}>
-      <GridNameCell>
-        <TextFieldOf
-          field={`${field}.name`}
-          label="Name of the state"
-          value={state.name}
-          isCell
-          change={(document, name) => updateState(document, partId, state.id, (before) => renameState(before, name))}
-        />
-      </GridNameCell>
-      <GridCell column="role">
-        <ChoiceField
-          field={`${field}.role`}
-          label={`Role of ${state.name}`}
-          isCell
-          value={state.role ?? ''}
-          choices={[{ value: '', label: 'none' }, ...ROLES]}
-          change={(document, role) =>
-            updateState(document, partId, state.id, (before) =>
-              withOptional(before, 'role', role === '' ? undefined : role),
-            )
-          }
-        />
-      </GridCell>
-      <QuantityCells
-        field={`${field}.current`}
-        label={`${label}: current`}
-        quantity={state.current}
-        options={CURRENT}
-        change={(document, update) =>
-          updateState(document, partId, state.id, (before) => ({ ...before, current: update(before.current) }))
-        }
-      />
-    </GridRow>
-  );
-});

@@ -1,9 +1,9 @@
 import type { Duration, ExchangeDuration, PhyId, Routine, Step } from '#common/engine/scenario/scenario.types.ts';
 import { phyPresets } from '#common/engine/link/phy.table.ts';
-import { useDocument, useFieldProblem } from '../../hooks/editor-context.tsx';
-import { CLOCK, OCTETS, POSITIVE_NUMBER, STEP_TIME } from '../../model/figure-options.ts';
-import { durationOfKind, updateStep } from '../../model/operations/routine-operations.ts';
-import { withOptional } from '../../model/operations/supply-operations.ts';
+import { useDocument, useFieldProblem } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import { CLOCK, OCTETS, POSITIVE_NUMBER, STEP_TIME } from '#frontend/features/scenario-editor/model/figure-options.ts';
+import { durationOfKind, updateStep } from '#frontend/features/scenario-editor/model/operations/routine-operations.ts';
+import { withOptional } from '#frontend/features/scenario-editor/model/operations/supply-operations.ts';
 import { FigureField } from '../fields/bound-fields.tsx';
 import { ChoiceField } from '../fields/choice-field.tsx';
 import { QuantityField } from '../fields/quantity-fields.tsx';

@@ -1,9 +1,13 @@
 import { memo, useState } from 'react';
-import { useShallowList } from '../../hooks/use-shallow-list.ts';
+import { useShallowList } from '#frontend/features/scenario-editor/hooks/use-shallow-list.ts';
 import type { Part, Routine, Step } from '#common/engine/scenario/scenario.types.ts';
 import { LIMITS } from '#common/schemas/limits.ts';
-import { useDocument, useEditorState, useEditorStore } from '../../hooks/editor-context.tsx';
-import { useRemoval } from '../../hooks/use-removal.ts';
+import {
+  useDocument,
+  useEditorState,
+  useEditorStore,
+} from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import { useRemoval } from '#frontend/features/scenario-editor/hooks/use-removal.ts';
 import {
   addStep,
   duplicateStep,
@@ -13,16 +17,16 @@ import {
   removeStep,
   updateStep,
   withPartState,
-} from '../../model/operations/routine-operations.ts';
-import { withOptional } from '../../model/operations/supply-operations.ts';
-import { REPEATS } from '../../model/figure-options.ts';
+} from '#frontend/features/scenario-editor/model/operations/routine-operations.ts';
+import { withOptional } from '#frontend/features/scenario-editor/model/operations/supply-operations.ts';
+import { REPEATS } from '#frontend/features/scenario-editor/model/figure-options.ts';
 import { FigureField, TextFieldOf } from '../fields/bound-fields.tsx';
 import { ChoiceField } from '../fields/choice-field.tsx';
 import { EditGrid, GridCell, GridNameCell, GridRow, type GridColumn, type PastedBlock } from '../grid/edit-grid.tsx';
 import { focusOfRow } from '../grid/grid-keys.ts';
 import { RowToolbar } from '../grid/row-toolbar.tsx';
 import { PasteDialog } from '../paste/paste-dialog.tsx';
-import { stepsPasteTarget } from '../../model/paste/steps-paste.ts';
+import { stepsPasteTarget } from '#frontend/features/scenario-editor/model/paste/steps-paste.ts';
 import { DurationCell } from './duration-cell.tsx';
 
 /** The steps of a routine: a duration and a state of each part. */
@@ -150,7 +154,7 @@ const StepRow = memo(function StepRow({ routineId, step, parts, isSelected }: St
             editLabel={`state of ${part.name} in ${step.name}`}
             isCell
             value={step.states[part.id] ?? ''}
-            choices={[{ value: '', label: '·' }, ...part.states.map(({ id, name }) => ({ value: id, label: name }))]}
+            choices={[{ value: '', label: 'rest' }, ...part.states.map(({ id, name }) => ({ value: id, label: name }))]}
             change={(document, stateId) =>
               updateStep(document, routineId, step.id, (before) => withPartState(before, part.id, stateId))
             }

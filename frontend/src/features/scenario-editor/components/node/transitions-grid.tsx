@@ -1,31 +1,31 @@
 import { memo, useState } from 'react';
 import type { Part, Transition } from '#common/engine/scenario/scenario.types.ts';
 import { LIMITS } from '#common/schemas/limits.ts';
-import { useEditorStore } from '../../hooks/editor-context.tsx';
-import { useRemoval } from '../../hooks/use-removal.ts';
-import { CURRENT, STEP_TIME } from '../../model/figure-options.ts';
+import { useEditorStore } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import { useRemoval } from '#frontend/features/scenario-editor/hooks/use-removal.ts';
+import { CURRENT, STEP_TIME } from '#frontend/features/scenario-editor/model/figure-options.ts';
 import {
   addTransition,
   moveTransition,
   removeTransition,
   updateTransition,
-} from '../../model/operations/part-operations.ts';
+} from '#frontend/features/scenario-editor/model/operations/part-operations.ts';
 import { ChoiceField, type Choice } from '../fields/choice-field.tsx';
 import { QuantityCells } from '../fields/quantity-fields.tsx';
 import { EditGrid, GridCell, GridRow, PINNED_CELL, type GridColumn } from '../grid/edit-grid.tsx';
 import { RowToolbar } from '../grid/row-toolbar.tsx';
 
 const COLUMNS: readonly GridColumn[] = [
-  { key: 'fromStateId', header: 'From', width: '7rem' },
-  { key: 'toStateId', header: 'To', width: '7rem' },
-  { key: 'duration-min', header: 'Time, min', width: '5.5rem', isNumber: true },
-  { key: 'duration-typical', header: 'typical', width: '5.5rem', isNumber: true },
-  { key: 'duration-max', header: 'max', width: '5.5rem', isNumber: true },
-  { key: 'duration-from', header: 'From', width: '5rem' },
-  { key: 'current-min', header: 'Current, min', width: '5.5rem', isNumber: true },
-  { key: 'current-typical', header: 'typical', width: '5.5rem', isNumber: true },
-  { key: 'current-max', header: 'max', width: '5.5rem', isNumber: true },
-  { key: 'current-from', header: 'From', width: '5rem' },
+  { key: 'fromStateId', header: 'From', width: '6.5rem' },
+  { key: 'toStateId', header: 'To', width: '6.5rem' },
+  { key: 'duration-min', header: 'Time min', width: '4.6rem', isNumber: true },
+  { key: 'duration-typical', header: 'typical', width: '4.6rem', isNumber: true },
+  { key: 'duration-max', header: 'max', width: '4.6rem', isNumber: true },
+  { key: 'duration-from', header: 'From', width: '4.4rem' },
+  { key: 'current-min', header: 'Current min', width: '4.6rem', isNumber: true },
+  { key: 'current-typical', header: 'typical', width: '4.6rem', isNumber: true },
+  { key: 'current-max', header: 'max', width: '4.6rem', isNumber: true },
+  { key: 'current-from', header: 'From', width: '4.4rem' },
 ];
 
 /** How a part goes from one state to another, and what that costs. */

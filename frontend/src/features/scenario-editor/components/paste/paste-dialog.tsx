@@ -1,8 +1,8 @@
 import { Button } from '#frontend/components/button.tsx';
 import { Dialog, DialogActions } from '#frontend/components/dialog.tsx';
-import { useEditorStore } from '../../hooks/editor-context.tsx';
-import type { PasteRow } from '../../model/paste/paste.ts';
-import type { PasteTarget } from '../../model/paste/steps-paste.ts';
+import { useEditorStore } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import type { PasteRow } from '#frontend/features/scenario-editor/model/paste/paste.ts';
+import type { PasteTarget } from '#frontend/features/scenario-editor/model/paste/steps-paste.ts';
 import type { PastedBlock } from '../grid/edit-grid.tsx';
 
 interface PasteDialogProps {

@@ -1,5 +1,5 @@
 import type { Change } from '#common/schemas/api/scenarios.ts';
-import { valueWords } from '../../model/change-words.ts';
+import { valueWords } from '#frontend/features/scenario-editor/model/change-words.ts';
 
 interface ChangeListProps {
   label: string;

@@ -4,10 +4,10 @@ import { ConfirmDialog } from '#frontend/components/confirm-dialog.tsx';
 import { FormError } from '#frontend/components/states.tsx';
 import { useToast } from '#frontend/components/toast.tsx';
 import { wordsOfError } from '#frontend/lib/form-errors.ts';
-import { restoreRevision, REVISIONS_KEY } from '../../api/revisions.ts';
-import { useEditorState, useEditorStore } from '../../hooks/editor-context.tsx';
-import { isDirty } from '../../model/editor-state.ts';
-import { savedOf } from '../../model/opening.ts';
+import { restoreRevision, REVISIONS_KEY } from '#frontend/features/scenario-editor/api/revisions.ts';
+import { useEditorState, useEditorStore } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import { isDirty } from '#frontend/features/scenario-editor/model/editor-state.ts';
+import { savedOf } from '#frontend/features/scenario-editor/model/opening.ts';
 
 interface RestoreDialogProps {
   scenarioId: string;

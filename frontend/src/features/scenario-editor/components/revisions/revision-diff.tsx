@@ -1,5 +1,5 @@
 import { ErrorState, Loading } from '#frontend/components/states.tsx';
-import { useRevisionDiff } from '../../api/revisions.ts';
+import { useRevisionDiff } from '#frontend/features/scenario-editor/api/revisions.ts';
 import { ChangeList } from './change-list.tsx';
 
 interface RevisionDiffProps {

@@ -3,8 +3,12 @@ import type { LibraryItem } from '#common/schemas/api/library.ts';
 import { formatChargeMah } from '#common/units/format-quantity.ts';
 import { Button } from '#frontend/components/button.tsx';
 import { Dialog } from '#frontend/components/dialog.tsx';
-import { useDocument, useEditorStore, useIsReadOnly } from '../../hooks/editor-context.tsx';
-import { updateSupply } from '../../model/operations/supply-operations.ts';
+import {
+  useDocument,
+  useEditorStore,
+  useIsReadOnly,
+} from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import { updateSupply } from '#frontend/features/scenario-editor/model/operations/supply-operations.ts';
 import { LibraryPicker } from '../library-picker.tsx';
 import { Section } from '../node/section.tsx';
 import { CellFigures } from './cell-figures.tsx';

@@ -8,10 +8,10 @@ import {
   POSITIVE_CURRENT,
   POSITIVE_VOLTAGE,
   TEMPERATURE,
-} from '../../model/figure-options.ts';
-import { updateCell, withOptional } from '../../model/operations/supply-operations.ts';
-import type { PairColumn } from '../../model/paste/pairs-paste.ts';
-import { useEditorStore, useIsReadOnly } from '../../hooks/editor-context.tsx';
+} from '#frontend/features/scenario-editor/model/figure-options.ts';
+import { updateCell, withOptional } from '#frontend/features/scenario-editor/model/operations/supply-operations.ts';
+import type { PairColumn } from '#frontend/features/scenario-editor/model/paste/pairs-paste.ts';
+import { useEditorStore, useIsReadOnly } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
 import { PairTable } from '../tables/pair-table.tsx';
 
 type TableKey =

@@ -1,8 +1,15 @@
 import type { Regulator, Table } from '#common/engine/scenario/scenario.types.ts';
 import type { ParseOptions } from '#common/units/parse-quantity.ts';
-import { useDocument, useEditorStore, useIsReadOnly } from '../../hooks/editor-context.tsx';
-import { CURRENT, POSITIVE_VOLTAGE, SHARE, VOLTAGE } from '../../model/figure-options.ts';
-import { regulatorOfKind, updateSupply } from '../../model/operations/supply-operations.ts';
+import {
+  useDocument,
+  useEditorStore,
+  useIsReadOnly,
+} from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import { CURRENT, POSITIVE_VOLTAGE, SHARE, VOLTAGE } from '#frontend/features/scenario-editor/model/figure-options.ts';
+import {
+  regulatorOfKind,
+  updateSupply,
+} from '#frontend/features/scenario-editor/model/operations/supply-operations.ts';
 import { FigureField } from '../fields/bound-fields.tsx';
 import { ChoiceField } from '../fields/choice-field.tsx';
 import { Section } from '../node/section.tsx';

@@ -1,10 +1,10 @@
 import { useState } from 'react';
 import type { Cell } from '#common/engine/scenario/scenario.types.ts';
 import { LIMITS } from '#common/schemas/limits.ts';
-import { useEditorStore } from '../../hooks/editor-context.tsx';
-import { PULSE_TIME, RESISTANCE } from '../../model/figure-options.ts';
-import { updateAt } from '../../model/list.ts';
-import { updateCell, withOptional } from '../../model/operations/supply-operations.ts';
+import { useEditorStore } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import { PULSE_TIME, RESISTANCE } from '#frontend/features/scenario-editor/model/figure-options.ts';
+import { updateAt } from '#frontend/features/scenario-editor/model/list.ts';
+import { updateCell, withOptional } from '#frontend/features/scenario-editor/model/operations/supply-operations.ts';
 import { FigureField } from '../fields/bound-fields.tsx';
 import { QuantityCells } from '../fields/quantity-fields.tsx';
 import { EditGrid, GridRow, PINNED_CELL, type GridColumn } from '../grid/edit-grid.tsx';

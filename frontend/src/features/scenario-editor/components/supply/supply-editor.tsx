@@ -1,11 +1,13 @@
-import { useDocument } from '../../hooks/editor-context.tsx';
-import { CELL_COUNT, RESERVE, VOLTAGE } from '../../model/figure-options.ts';
-import { updateSupply, withOptional } from '../../model/operations/supply-operations.ts';
+import { useDocument } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import { CELL_COUNT, RESERVE, VOLTAGE } from '#frontend/features/scenario-editor/model/figure-options.ts';
+import { updateSupply, withOptional } from '#frontend/features/scenario-editor/model/operations/supply-operations.ts';
 import { FigureField } from '../fields/bound-fields.tsx';
 import { MaximaSection } from '../node/maxima-section.tsx';
 import { Section } from '../node/section.tsx';
 import { CellSection } from './cell-section.tsx';
-import { CapacitorSection, HarvestSection, LowBatterySection } from './optional-sections.tsx';
+import { CapacitorSection } from './capacitor-section.tsx';
+import { HarvestSection } from './harvest-section.tsx';
+import { LowBatterySection } from './low-battery-section.tsx';
 import { RegulatorSection } from './regulator-section.tsx';
 
 /** Where the charge comes from: cells, regulator, and what guards them. */

@@ -1,9 +1,14 @@
 import { useState } from 'react';
 import type { Scenario, Table } from '#common/engine/scenario/scenario.types.ts';
 import { LIMITS } from '#common/schemas/limits.ts';
-import { useEditorStore } from '../../hooks/editor-context.tsx';
-import { risingProblem, withoutRow, withPair, withRowAfter } from '../../model/pair-rows.ts';
-import { pairsPasteTarget, type PairColumn } from '../../model/paste/pairs-paste.ts';
+import { useEditorStore } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import {
+  risingProblem,
+  withoutRow,
+  withPair,
+  withRowAfter,
+} from '#frontend/features/scenario-editor/model/pair-rows.ts';
+import { pairsPasteTarget, type PairColumn } from '#frontend/features/scenario-editor/model/paste/pairs-paste.ts';
 import { FigureField } from '../fields/bound-fields.tsx';
 import { EditGrid, GridCell, GridRow, PINNED_CELL, type PastedBlock } from '../grid/edit-grid.tsx';
 import { RowToolbar } from '../grid/row-toolbar.tsx';

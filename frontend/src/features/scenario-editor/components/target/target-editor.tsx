@@ -1,7 +1,7 @@
 import type { Target } from '#common/engine/scenario/scenario.types.ts';
-import { useDocument } from '../../hooks/editor-context.tsx';
-import { CONFIDENCE, LIFE } from '../../model/figure-options.ts';
-import { updateTarget, withOptional } from '../../model/operations/supply-operations.ts';
+import { useDocument } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
+import { CONFIDENCE, LIFE } from '#frontend/features/scenario-editor/model/figure-options.ts';
+import { updateTarget, withOptional } from '#frontend/features/scenario-editor/model/operations/supply-operations.ts';
 import { FigureField } from '../fields/bound-fields.tsx';
 import { ChoiceField } from '../fields/choice-field.tsx';
 import { Section } from '../node/section.tsx';
