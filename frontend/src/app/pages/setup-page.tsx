@@ -1,12 +1,12 @@
-import { useNavigate, useSearchParams } from 'react-router-dom';
+import { useLocation, useNavigate } from 'react-router-dom';
 import { ButtonLink } from '#frontend/components/button.tsx';
 import { PageTitle } from '#frontend/components/page-title.tsx';
 import { SetupForm } from '#frontend/features/session/components/setup-form.tsx';
 
 export function SetupPage() {
   const navigate = useNavigate();
-  const [search] = useSearchParams();
-  const token = search.get('token');
+  // In the fragment, which the browser sends to no server.
+  const token = new URLSearchParams(useLocation().hash.slice(1)).get('token');
   return (
     <div className="page pt-14 md:pt-24">
       <PageTitle
