@@ -7,6 +7,7 @@ export default defineConfig({
   test: {
     maxWorkers: Number(process.env['TEST_WORKERS'] ?? 2),
     allowOnly: false,
+    slowTestThreshold: 5000,
     reporters: [['default', { summary: false }], './test/support/count-reporter.ts'],
     coverage: { include: ['{backend,common,frontend}/src/**'], reportsDirectory: '.local/coverage' },
     projects: [

@@ -18,7 +18,7 @@ const SLOW = ['api', 'browser'];
  * @returns {Promise<{ code: number, output: string }>}
  */
 function run(command, { env = {}, isShown = false } = {}) {
-  const colour = process.stdout.isTTY ? { FORCE_COLOR: '1' } : {};
+  const colour = process.stdout.isTTY ? { FORCE_COLOR: '1' } : { NO_COLOR: '1' };
   const child = spawn(process.execPath, command, {
     cwd: ROOT,
     env: { ...process.env, ...colour, ...env },
