@@ -2,8 +2,7 @@ import { existsSync } from 'node:fs';
 import { fileURLToPath } from 'node:url';
 import type { Logger } from 'pino';
 import { catalogueItems } from '#common/catalogue/catalogue.ts';
-import * as engine from '#common/engine/index.ts';
-import { InconsistentInputError } from '#common/errors.ts';
+import { forecast } from '#common/engine/index.ts';
 import { compose, type Composition } from './compose.ts';
 import { createLogger } from '#backend/logger.ts';
 import { createDataSource } from '#backend/persistence/data-source.ts';
@@ -29,12 +28,7 @@ async function run(settings: Settings, logger: Logger): Promise<void> {
     dataSource,
     sessionPool,
     logger,
-    forecast: () => {
-      throw new InconsistentInputError(`The engine is not there yet (${Object.keys(engine).length} exports).`, {
-        code: 'no-engine',
-        field: '',
-      });
-    },
+    forecast,
     catalogue: catalogueItems(),
     publicUrl: settings.publicUrl,
     sessionSecret: settings.sessionSecret,

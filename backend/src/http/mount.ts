@@ -50,8 +50,9 @@ function readBody(route: Route): RequestHandler[] {
       if (hasBody) throw new InvalidInputError([{ path: '', message: 'This address takes no body.' }]);
       return next();
     }
-    if (hasBody && request.is('application/json') === false) {
-      return sendProblem(response, 'unsupported-media-type', { detail: 'Send JSON, as application/json.' });
+    if (!hasBody) throw new InvalidInputError([{ path: '', message: 'Send a JSON body.' }]);
+    if (request.is('application/json') === false || !isUtf8(request.headers['content-type'])) {
+      return sendProblem(response, 'unsupported-media-type', { detail: 'Send JSON in UTF-8, as application/json.' });
     }
     next();
   };
@@ -63,6 +64,11 @@ function readBody(route: Route): RequestHandler[] {
     type: 'application/json',
   });
   return [expectBody, parse, guardBody];
+}
+
+function isUtf8(contentType = ''): boolean {
+  const charset = /;\s*charset\s*=\s*"?([^";\s]+)/i.exec(contentType)?.[1];
+  return charset === undefined || charset.toLowerCase() === 'utf-8';
 }
 
 const guardBody: RequestHandler = (request, _response, next) => {

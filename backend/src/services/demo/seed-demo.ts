@@ -11,6 +11,12 @@ export const DEMO_ACCOUNTS: readonly { account: DemoAccount; name: string }[] = 
   { account: 'viewer', name: 'Vera Holt' },
 ];
 
+/**
+ * Address that a demo account signs in with.
+ *
+ * @param account the account
+ * @returns its e-mail address, at a domain that cannot exist
+ */
 export function demoEmail(account: DemoAccount): string {
   return `${account}@tarnfold.example`;
 }
