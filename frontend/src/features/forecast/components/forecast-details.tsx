@@ -24,7 +24,7 @@ const Details = memo(function Details({ scenario, forecast }: Props) {
       {forecast ? (
         <>
           <ChargeLedger scenario={scenario} forecast={forecast} />
-          {forecast.dekads.length > 0 && <ForecastCurves scenario={scenario} forecast={forecast} />}
+          {forecast.dekads.length > 1 && <ForecastCurves scenario={scenario} forecast={forecast} />}
           <DutyCycles scenario={scenario} forecast={forecast} />
         </>
       ) : (

@@ -1,7 +1,9 @@
+import { freshResistanceOhm, packOf, resistanceTemperatureFactor, tableValue } from '#common/engine/index.ts';
 import type { DekadPoint, Forecast, Scenario } from '#common/engine/index.ts';
 import { monthName } from '#common/units/format-duration.ts';
-import { formatChargeMah } from '#common/units/format-quantity.ts';
+import { formatChargeMah, formatNumber } from '#common/units/format-quantity.ts';
 import { MAH_C } from '#common/units/si.ts';
+import { depthAtEnd } from './depth.ts';
 import { amps, celsius, fineVolts, ohms, percent, volts } from './figures.ts';
 import { lifeInWords, spanInWords, typedSpan } from './life-words.ts';
 import { findStep, partName } from './names.ts';
@@ -107,18 +109,24 @@ function explainLimit(scenario: Scenario, forecast: Forecast): Explanation {
 }
 
 function voltageRows(scenario: Scenario, forecast: Forecast, last: DekadPoint): Explanation['rows'] {
-  const sagV = last.openCircuitV - last.loadedV;
+  const { cell, series, parallel } = scenario.supply;
   const isPeak = forecast.peak !== null && forecast.peak.intervalId === forecast.criticalIntervalId;
-  const currentA = isPeak ? forecast.peak?.currentA : undefined;
-  const fresh = scenario.supply.cell.resistanceOhm[0]?.ohm.typical;
+  const durationS = isPeak ? (forecast.peak?.durationS ?? 0) : 0;
+  const freshOhm =
+    freshResistanceOhm(cell.resistanceOhm, durationS) * packOf(cell, { series, parallel }).resistanceFactor;
+  const cold = resistanceTemperatureFactor(cell.resistanceFactorByTemperature, last.coldestC);
+  const depth = depthAtEnd(scenario, forecast);
+  const deep = tableValue(cell.resistanceFactorByDepth, depth);
+  const factor = (value: number): string => `× ${formatNumber(value, { significantDigits: 2 })}`;
   return [
-    { label: 'Open circuit', value: fineVolts(last.openCircuitV) },
-    { label: `Lost under load at ${celsius(last.coldestC)}`, value: fineVolts(sagV) },
-    { label: 'Loaded', value: fineVolts(last.loadedV) },
+    { label: 'Open circuit, at the month’s mean', value: fineVolts(last.openCircuitV) },
+    { label: 'Loaded, at the coldest hour', value: last.loadedV > 0 ? fineVolts(last.loadedV) : 'collapses' },
     { label: 'Limit', value: fineVolts(last.limitV) },
-    ...(currentA ? [{ label: 'Current in the step', value: amps(currentA) }] : []),
-    ...(currentA && sagV > 0 ? [{ label: 'Resistance then', value: `about ${ohms(sagV / currentA)}` }] : []),
-    ...(fresh ? [{ label: 'Fresh cell at 20 °C', value: ohms(fresh) }] : []),
+    ...(isPeak && forecast.peak ? [{ label: 'Current in the step', value: amps(forecast.peak.currentA) }] : []),
+    { label: 'Resistance, fresh and at 20 °C', value: ohms(freshOhm) },
+    { label: `At ${celsius(last.coldestC)}`, value: factor(cold) },
+    { label: `At a depth of ${percent(depth)}`, value: factor(deep) },
+    { label: 'Resistance then', value: ohms(freshOhm * cold * deep) },
   ];
 }
 

@@ -43,6 +43,8 @@ describe('forecastFacts', () => {
   it('forecastFacts: adds outages only where there are any', () => {
     expect(fact('Last report')).toBe('undefined | ');
     const outages = [{ winter: 5, startS: 1, endS: 2, hours: 30 }];
-    expect(fact('Last report', { outages, lastReportS: 7 * YEAR_S })).toBe('7.0 years | silent for 30 h in 1 winter');
+    expect(fact('Last report', { outages, lastReportS: 7 * YEAR_S })).toBe(
+      '7.0 years | silent for 30 hours in 1 winter',
+    );
   });
 });

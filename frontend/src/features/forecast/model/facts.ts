@@ -1,8 +1,8 @@
 import type { Forecast, Scenario } from '#common/engine/index.ts';
 import { formatNumber } from '#common/units/format-quantity.ts';
-import { YEAR_S } from '#common/units/si.ts';
+import { HOUR_S, YEAR_S } from '#common/units/si.ts';
 import { amps, charge, percent, seconds } from './figures.ts';
-import { lifeInWords, spanInWords, typedSpan } from './life-words.ts';
+import { isWithTheEnd, lifeInWords, spanInWords, typedSpan } from './life-words.ts';
 import { findStep } from './names.ts';
 
 export interface Fact {
@@ -50,7 +50,8 @@ function warningFact(scenario: Scenario, forecast: Forecast): Fact {
   if (!forecast.warning) return { label, value: 'does not come' };
   const cleared = forecast.warning.falseAlarmTimesS.length;
   const note = cleared > 0 ? { note: `${cleared} earlier, cleared again` } : {};
-  return { label, value: `${spanInWords(forecast.warning.leadS)} ahead`, ...note };
+  const value = isWithTheEnd(forecast.warning) ? 'only with the end' : `${spanInWords(forecast.warning.leadS)} ahead`;
+  return { label, value, ...note };
 }
 
 function peakFact(scenario: Scenario, forecast: Forecast): Fact {
@@ -77,7 +78,7 @@ function outageFacts(forecast: Forecast): Fact[] {
     {
       label: 'Last report if it recovers each time',
       value: lifeInWords(forecast.lastReportS),
-      note: `silent for ${formatNumber(Math.round(hours), { significantDigits: 6 })} h in ${forecast.outages.length} ${forecast.outages.length === 1 ? 'winter' : 'winters'}`,
+      note: `silent for ${spanInWords(hours * HOUR_S)} in ${forecast.outages.length} ${forecast.outages.length === 1 ? 'winter' : 'winters'}`,
     },
   ];
 }

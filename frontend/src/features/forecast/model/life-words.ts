@@ -1,4 +1,4 @@
-import type { Forecast, Scenario } from '#common/engine/index.ts';
+import type { Forecast, Scenario, Warning } from '#common/engine/index.ts';
 import { formatDuration, formatLifeYears, monthName } from '#common/units/format-duration.ts';
 import { HOUR_S, YEAR_S } from '#common/units/si.ts';
 import { ordinal } from './names.ts';
@@ -20,6 +20,11 @@ function halfYears(lifeS: number): string {
 /** A shorter stretch in whole units: "41 days", "5 months", "31 hours". */
 export function spanInWords(spanS: number): string {
   return spanS < HOUR_S ? 'less than an hour' : formatLifeYears(spanS);
+}
+
+/** Whether a warning comes too late to be of use: within the last hour. */
+export function isWithTheEnd(warning: Warning): boolean {
+  return warning.leadS < HOUR_S;
 }
 
 /** A typed time such as a target or a shelf life, as typed: "10 years". */

@@ -29,6 +29,18 @@ export function partName(scenario: Scenario, partId: string | null): string {
   return findPart(scenario, partId)?.name ?? 'A removed part';
 }
 
+/**
+ * A part inside a sentence, after "the": its name where that reads as a plain noun, else what kind of part it is where there
+ * is one of that kind, else its name in quotes.
+ */
+export function partNoun(scenario: Scenario, partId: string): string {
+  const part = findPart(scenario, partId);
+  if (!part) return 'removed part';
+  if (/^\p{L}[\p{L}\d-]*( \p{L}[\p{L}\d-]*){0,3}$/u.test(part.name)) return midSentence(part.name);
+  const isOnly = scenario.node.parts.filter(({ kind }) => kind === part.kind).length === 1;
+  return isOnly && part.kind !== 'other' ? part.kind : `part “${part.name}”`;
+}
+
 export function stateName(scenario: Scenario, partId: string | null, stateId: string | null): string {
   return findPart(scenario, partId)?.states.find((state) => state.id === stateId)?.name ?? 'a removed state';
 }

@@ -1,5 +1,6 @@
+import { DEKAD_S, winterStartMonth } from '#common/engine/index.ts';
 import type { Climate, DekadPoint, Forecast, Scenario } from '#common/engine/index.ts';
-import { YEAR_S } from '#common/units/si.ts';
+import { MONTH_S, YEAR_S } from '#common/units/si.ts';
 
 /** Borders between the five tints of the ribbon, V. Halving, so that the tint tells most where little is left. */
 export const HEADROOM_BORDERS_V = [0.8, 0.4, 0.2, 0.1] as const;
@@ -7,8 +8,6 @@ export const HEADROOM_BORDERS_V = [0.8, 0.4, 0.2, 0.1] as const;
 export type HeadroomStep = 1 | 2 | 3 | 4 | 5;
 
 const DEKADS_PER_YEAR = 36;
-const DEKAD_S = YEAR_S / DEKADS_PER_YEAR;
-export const MONTH_S = YEAR_S / 12;
 const MAX_ROWS = 40;
 
 export interface RibbonMonth {
@@ -165,10 +164,9 @@ export function ribbonMeasures(rowCount: number): RibbonMeasures {
 }
 
 /** The three consecutive coldest months of a climate, or null where the year has no seasons. */
-export function winterMonths(climate: Climate): number[] | null {
-  const means = climate.months.map((month) => month.meanC);
+export function winterMonths({ months }: Climate): number[] | null {
+  const means = months.map((month) => month.meanC);
   if (Math.max(...means) - Math.min(...means) < 1) return null;
-  const sumFrom = (i: number): number => [0, 1, 2].reduce((sum, k) => sum + (means[(i + k) % 12] ?? 0), 0);
-  const first = means.reduce((best, _, i) => (sumFrom(i) < sumFrom(best) ? i : best), 0);
-  return [0, 1, 2].map((k) => ((first + k) % 12) + 1);
+  const first = winterStartMonth(months);
+  return [0, 1, 2].map((k) => ((first - 1 + k) % 12) + 1);
 }

@@ -23,7 +23,7 @@ describe('forecastSentence', () => {
 
   it('forecastSentence: names the load at rest when rest is critical', () => {
     expect(told({ criticalStepId: 'rest', failingPartId: 'mcu' })).toContain(
-      'when the load at rest pulls the cell under 2.0 V, the least that controller needs, with 18 %',
+      'when the load at rest pulls the cell under 2.0 V, the least that the controller needs, with 18 %',
     );
   });
 
@@ -31,6 +31,21 @@ describe('forecastSentence', () => {
     expect(told({ failingPartId: null, limitedBy: 'regulator' })).toContain(
       'when the transmit step pulls the cell under 2.0 V, below which its regulator stops, with',
     );
+  });
+
+  it('forecastSentence: quotes a step of several words and calls a part with a long name by its kind', () => {
+    const text = told({}, (s) => {
+      const [radio] = s.node.parts;
+      const step = s.node.routines[0]?.steps[2];
+      if (radio) radio.name = 'Transceiver 2.4 GHz, IEEE 802.15.4';
+      if (step) step.name = 'Send the frame';
+    });
+    expect(text).toContain('when the radio’s step “Send the frame” pulls the cell under 2.0 V, with');
+  });
+
+  it('forecastSentence: says when the warning comes too late to be of use', () => {
+    const warning = { timeS: 6.35 * YEAR_S, leadS: 0, falseAlarmTimesS: [], thresholdV: 2.4 };
+    expect(told({ warning })).toContain('The low-battery warning comes only with the end.');
   });
 
   it('forecastSentence: tells an exhausted charge', () => {
@@ -46,8 +61,21 @@ describe('forecastSentence', () => {
   });
 
   it('forecastSentence: tells charge that the cold keeps out of reach', () => {
-    expect(told({ outcome: 'charge-exhausted', chargeLeftFraction: 0.12 })).toContain(
-      'when the cell is empty: with 12 % out of reach in the cold.',
+    expect(told({ outcome: 'charge-exhausted', chargeLeftFraction: 0.22 })).toContain(
+      'when the cell is empty at −8 °C: with 22 % of the charge out of reach.',
+    );
+  });
+
+  it('forecastSentence: takes the depth at the coldest hour, where the cold leaves less to be had', () => {
+    const text = told({ chargeLeftFraction: 0.57 }, (s) => {
+      s.supply.cell.capacityFactorByTemperature = [
+        [-20, 0.44],
+        [-5, 0.44],
+        [20, 1],
+      ];
+    });
+    expect(text).toContain(
+      'when the cell is empty at −8 °C: with 57 % of the charge out of reach, the radio’s transmit step pulls the cell under 2.0 V.',
     );
   });
 

@@ -1,8 +1,9 @@
 import type { Forecast, Scenario } from '#common/engine/index.ts';
 import { monthName } from '#common/units/format-duration.ts';
-import { percent, volts } from './figures.ts';
-import { endInWords, lifeInWords, spanInWords, typedSpan } from './life-words.ts';
-import { cellWords, findStep, midSentence, partName } from './names.ts';
+import { depthAtEnd } from './depth.ts';
+import { celsius, percent, volts } from './figures.ts';
+import { endInWords, isWithTheEnd, lifeInWords, spanInWords, typedSpan } from './life-words.ts';
+import { cellWords, findStep, midSentence, partNoun } from './names.ts';
 import { oversubscriptions } from './oversubscribed.ts';
 import { lifePrecision } from './precision.ts';
 
@@ -16,8 +17,8 @@ export interface SentencePart {
   key: FigureKey | null;
 }
 
-/** An undervoltage with less than this left is told as an empty cell. */
-export const EMPTY_BELOW = 0.1;
+/** An undervoltage at a greater depth is told as an empty cell. */
+const EMPTY_DEPTH = 0.9;
 const TYPICAL = ' with typical figures';
 
 const plain = (text: string): SentencePart => ({ text, emphasis: 'plain', key: null });
@@ -29,7 +30,9 @@ const figure = (text: string, key: FigureKey): SentencePart => ({ text, emphasis
 export function forecastSentence(scenario: Scenario, forecast: Forecast): SentencePart[] {
   switch (forecast.outcome) {
     case 'undervoltage':
-      return forecast.chargeLeftFraction < EMPTY_BELOW ? emptied(scenario, forecast) : undervoltage(scenario, forecast);
+      return depthAtEnd(scenario, forecast) > EMPTY_DEPTH
+        ? emptied(scenario, forecast)
+        : undervoltage(scenario, forecast);
     case 'charge-exhausted':
       return emptied(scenario, forecast);
     case 'shelf-life':
@@ -73,17 +76,20 @@ function undervoltage(scenario: Scenario, forecast: Forecast): SentencePart[] {
 
 function emptied(scenario: Scenario, forecast: Forecast): SentencePart[] {
   const cell = cellWords(scenario);
-  const start = [...lives(scenario, forecast), plain('It ends in '), end(scenario, forecast)];
-  const verb = cell.isPlural ? 'are' : 'is';
-  const tail =
-    forecast.outcome === 'undervoltage'
-      ? [plain(' of the charge left, '), ...pull(scenario, forecast), plain('.')]
-      : [plain(forecast.chargeLeftFraction >= 0.005 ? ' out of reach in the cold.' : ' of the charge left.')];
+  const coldestC = forecast.dekads.at(-1)?.coldestC;
+  // Where much is left, it is the cold that keeps it in the cell.
+  const isCold = coldestC !== undefined && forecast.chargeLeftFraction > 1 - EMPTY_DEPTH;
+  const empty = `${cell.the} ${cell.isPlural ? 'are' : 'is'} empty${isCold ? ` at ${celsius(coldestC)}` : ''}`;
+  const left = isCold ? ' of the charge out of reach' : ' of the charge left';
   return [
-    ...start,
-    plain(`, when ${cell.the} ${verb} empty: with `),
+    ...lives(scenario, forecast),
+    plain('It ends in '),
+    end(scenario, forecast),
+    plain(`, when ${empty}: with `),
     chargeLeft(forecast),
-    ...tail,
+    plain(left),
+    ...(forecast.outcome === 'undervoltage' ? [plain(', '), ...pull(scenario, forecast)] : []),
+    plain('.'),
     ...warning(scenario, forecast),
   ];
 }
@@ -169,11 +175,9 @@ function pull(scenario: Scenario, forecast: Forecast): SentencePart[] {
 function subjectOf(scenario: Scenario, forecast: Forecast): { subject: string; namesPart: boolean } {
   if (forecast.criticalStepId === 'rest') return { subject: 'the load at rest', namesPart: false };
   const step = findStep(scenario, forecast.criticalStepId)?.step.name ?? 'heaviest';
-  const owner = forecast.failingPartId === null ? null : midSentence(partName(scenario, forecast.failingPartId));
-  const isOneWord = /^[\p{L}-]+$/u.test(step);
-  const isPlainOwner = owner !== null && /^[\p{L}][\p{L}\d -]*$/u.test(owner);
-  const stepWords = isOneWord ? `${midSentence(step)} step` : `step “${step}”`;
-  if (!isPlainOwner) return { subject: `the ${stepWords}`, namesPart: false };
+  const stepWords = /^[\p{L}-]+$/u.test(step) ? `${midSentence(step)} step` : `step “${step}”`;
+  if (forecast.failingPartId === null) return { subject: `the ${stepWords}`, namesPart: false };
+  const owner = partNoun(scenario, forecast.failingPartId);
   return { subject: `the ${owner}${owner.endsWith('s') ? '’' : '’s'} ${stepWords}`, namesPart: true };
 }
 
@@ -181,7 +185,7 @@ function limitClause(scenario: Scenario, forecast: Forecast, namesPart: boolean)
   if (forecast.limitedBy === 'regulator') return ', below which its regulator stops';
   if (forecast.limitedBy === 'cut-off') return ', the cut-off';
   if (namesPart || forecast.failingPartId === null) return '';
-  return `, the least that ${midSentence(partName(scenario, forecast.failingPartId))} needs`;
+  return `, the least that the ${partNoun(scenario, forecast.failingPartId)} needs`;
 }
 
 function chargeLeft(forecast: Forecast): SentencePart {
@@ -194,6 +198,9 @@ function warning(scenario: Scenario, forecast: Forecast): SentencePart[] {
     return [plain(' The low-battery warning does '), figure('not come', 'warning'), plain(' before.')];
   const cleared = forecast.warning.falseAlarmTimesS.length;
   const after = cleared === 0 ? '' : `, after ${cleared === 1 ? 'one that was' : `${cleared} that were`} cleared again`;
+  if (isWithTheEnd(forecast.warning)) {
+    return [plain(' The low-battery warning comes '), figure('only with the end', 'warning'), plain(`${after}.`)];
+  }
   return [
     plain(' The low-battery warning comes '),
     figure(spanInWords(forecast.warning.leadS), 'warning'),
