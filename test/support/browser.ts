@@ -65,7 +65,7 @@ export async function openBrowser(options: BrowserOptions): Promise<TestBrowser>
   context.on('page', listen);
   const page = context.pages()[0] ?? (await context.newPage());
   listen(page);
-  page.setDefaultTimeout(15_000);
+  page.setDefaultTimeout(30_000);
   return {
     context,
     page,
