@@ -40,7 +40,10 @@ const TABS = [
 export function ScenarioPage() {
   const { scenarioId = '' } = useParams();
   const scenario = useScenario(scenarioId);
-  if (scenario.data) return <OpenScenario key={scenarioId} detail={scenario.data} />;
+  const session = useSession();
+  if (scenario.data && session) {
+    return <OpenScenario key={scenarioId} detail={scenario.data} canEdit={session.canEdit} />;
+  }
   if (scenario.error instanceof ApiError && [400, 404].includes(scenario.error.status)) return <NotFoundPage />;
   return (
     <div className="page pt-10">
@@ -56,8 +59,7 @@ export function ScenarioPage() {
   );
 }
 
-function OpenScenario({ detail }: { detail: ScenarioDetail }) {
-  const canEdit = useSession()?.canEdit === true;
+function OpenScenario({ detail, canEdit }: { detail: ScenarioDetail; canEdit: boolean }) {
   // Opened once: what comes from the server later is told by saving, never put in the place of what is being typed.
   const [{ store, kept }] = useState(() => openScenario(detail, canEdit ? readDraft(localStorage, detail.id) : null));
   return (

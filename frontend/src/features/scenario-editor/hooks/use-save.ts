@@ -4,6 +4,7 @@ import { scenarioDetailSchema, type ScenarioDetail } from '#common/schemas/api/s
 import type { InputProblem } from '#common/schemas/problem.ts';
 import { ApiError } from '#frontend/lib/api-client.ts';
 import { wordsOfError } from '#frontend/lib/form-errors.ts';
+import { isServerReachable, subscribeToReachability } from '#frontend/lib/reachability.ts';
 import { REVISIONS_KEY } from '../api/revisions.ts';
 import { saveScenario, scenarioQuery } from '../api/scenario.ts';
 import { isDirty, unsettledFields } from '../model/editor-state.ts';
@@ -118,7 +119,7 @@ function statusOf(error: unknown): SaveStatus {
   return { kind: 'failed', message: wordsOfError(error), problems };
 }
 
-/** Tries again when the browser says that it is online, and now and then besides. */
+/** Tries again when the browser is online or another request has come through, and now and then besides. */
 function useRetry(isOn: boolean, retry: () => void): void {
   const latest = useRef(retry);
   useEffect(() => {
@@ -128,9 +129,13 @@ function useRetry(isOn: boolean, retry: () => void): void {
     if (!isOn) return undefined;
     const attempt = (): void => latest.current();
     const timer = setInterval(attempt, RETRY_MS);
+    const unsubscribe = subscribeToReachability(() => {
+      if (isServerReachable()) attempt();
+    });
     window.addEventListener('online', attempt);
     return () => {
       clearInterval(timer);
+      unsubscribe();
       window.removeEventListener('online', attempt);
     };
   }, [isOn]);
