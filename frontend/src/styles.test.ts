@@ -6,9 +6,9 @@ const css = readFileSync('frontend/src/styles.css', 'utf8');
 
 function colours(selector: string): Record<string, string> {
   const block = css.slice(css.indexOf(selector)).match(/\{([^{}]*)\}/)?.[1] ?? '';
-  return Object.fromEntries(
-    [...block.matchAll(/--([\w-]+): (#[0-9a-f]{6});/g)].map(([, name, value]) => [name, value]),
-  );
+  const found: Record<string, string> = {};
+  for (const [, name = '', value = ''] of block.matchAll(/--([\w-]+): (#[0-9a-f]{6});/g)) found[name] = value;
+  return found;
 }
 
 const LIGHT = colours(':root {');

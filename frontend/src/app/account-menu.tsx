@@ -55,7 +55,10 @@ export function AccountMenu({ session }: { session: SignedIn }) {
       button={
         <>
           <span className="sr-only">Account of {session.user.name},</span>
-          <span className="max-w-44 truncate max-sm:sr-only">{session.workspace.name}</span>
+          <span className="text-right max-sm:sr-only">
+            <span className="block max-w-44 truncate">{session.workspace.name}</span>
+            {session.workspace.isDemo && <span className="block text-xs text-muted">demo, all figures invented</span>}
+          </span>
           <span
             aria-hidden="true"
             className="inline-flex size-8 items-center justify-center rounded-full bg-accent-soft text-small font-semibold"

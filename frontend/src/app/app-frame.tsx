@@ -59,11 +59,11 @@ export function AppFrame() {
           {navigation.state === 'loading' && <div className="h-px w-1/3 animate-pulse bg-accent" />}
         </div>
         <OfflineNotice />
-        {session?.workspace.isDemo === true && <DemoNotice />}
       </header>
-      <main id="main" tabIndex={-1} className="pb-24">
+      <main id="main" tabIndex={-1} className="min-h-[calc(100dvh-9rem)] pb-20">
         <Outlet />
       </main>
+      {session?.workspace.isDemo === true && <DemoNotice />}
       <ScrollRestoration />
     </FrameSlotsContext>
   );

@@ -29,7 +29,7 @@ export interface ParsedInputProps<T> {
   /** In a table: no label to see, and the problem is shown by the table. */
   isCell?: boolean;
   align?: 'left' | 'right';
-  /** Shown behind the text, such as where the figure comes from. */
+  /** Shown below the text, such as where the figure comes from. */
   children?: ReactNode;
 }
 
@@ -110,28 +110,27 @@ export function ParsedInput<T>(props: ParsedInputProps<T>): ReactNode {
       <label htmlFor={id} className={isCell ? 'sr-only' : 'block text-small text-muted'}>
         {label}
       </label>
-      <div className="flex items-baseline gap-1.5">
-        <input
-          id={id}
-          type="text"
-          data-field={field}
-          value={input.text}
-          placeholder={placeholder}
-          autoComplete="off"
-          autoCapitalize="off"
-          spellCheck={false}
-          aria-invalid={input.message === undefined ? undefined : true}
-          title={isCell ? input.message : undefined}
-          aria-describedby={isDescribed ? messageId : undefined}
-          onChange={(event) => input.take(event.target.value)}
-          onFocus={input.onFocus}
-          onBlur={input.onBlur}
-          onKeyDown={handleKeyDown}
-          className={`${isCell ? CELL_INPUT : LINE_INPUT} ${align === 'right' ? 'text-right' : ''}`}
-        />
+      <input
+        id={id}
+        type="text"
+        data-field={field}
+        value={input.text}
+        placeholder={placeholder}
+        autoComplete="off"
+        autoCapitalize="off"
+        spellCheck={false}
+        aria-invalid={input.message === undefined ? undefined : true}
+        title={isCell ? (input.message ?? input.text) : undefined}
+        aria-describedby={isDescribed ? messageId : undefined}
+        onChange={(event) => input.take(event.target.value)}
+        onFocus={input.onFocus}
+        onBlur={input.onBlur}
+        onKeyDown={handleKeyDown}
+        className={`${isCell ? CELL_INPUT : LINE_INPUT} ${align === 'right' ? 'text-right' : ''}`}
+      />
+      <Message id={messageId} isCell={isCell} message={input.message} hint={hint}>
         {children}
-      </div>
-      <Message id={messageId} isCell={isCell} message={input.message} hint={hint} />
+      </Message>
     </div>
   );
 }
@@ -144,17 +143,29 @@ const CELL_INPUT =
   'h-9 w-full min-w-0 rounded-none border-b border-transparent bg-transparent px-1.5 text-ink ' +
   'hover:border-line focus-visible:outline-offset-[-2px] aria-invalid:border-rust aria-invalid:text-rust';
 
-function Message({ id, isCell, message, hint }: { id: string; isCell: boolean; message?: string; hint?: string }) {
+interface MessageProps {
+  id: string;
+  isCell: boolean;
+  message: string | undefined;
+  hint: string | undefined;
+  children: ReactNode;
+}
+
+function Message({ id, isCell, message, hint, children }: MessageProps) {
   // The table that a cell is in shows its message in a place kept free for it.
-  if (isCell)
+  if (isCell) {
     return message === undefined ? null : (
       <span id={id} className="sr-only">
         {message}
       </span>
     );
+  }
   return (
-    <p id={id} className={`min-h-5 pt-1 text-small ${message === undefined ? 'text-muted' : 'text-rust'}`}>
-      {message ?? hint}
-    </p>
+    <div className="flex min-h-6 flex-wrap items-baseline gap-x-3 pt-1 text-small">
+      <p id={id} className={message === undefined ? 'text-muted' : 'text-rust'}>
+        {message ?? hint}
+      </p>
+      {children}
+    </div>
   );
 }

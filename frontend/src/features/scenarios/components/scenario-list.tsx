@@ -6,6 +6,7 @@ import { RowMenu } from '#frontend/components/row-menu.tsx';
 import { When } from '#frontend/components/when.tsx';
 import { useScenarioActs, type ScenarioActs } from '../hooks/use-scenario-acts.ts';
 import { ForecastShort } from './forecast-short.tsx';
+import { LifeLine, lifeScaleYears } from './life-line.tsx';
 
 export interface ScenarioListProps {
   scenarios: readonly ScenarioSummary[];
@@ -19,7 +20,7 @@ export function ScenarioList({ scenarios, canEdit, sort, onSort }: ScenarioListP
   return (
     <DataTable
       caption="Scenarios"
-      columns={columns(canEdit, acts)}
+      columns={columns({ canEdit, acts, scaleYears: lifeScaleYears(scenarios.map(({ forecast }) => forecast)) })}
       rows={scenarios}
       rowKey={(scenario) => scenario.id}
       sort={sort}
@@ -28,7 +29,13 @@ export function ScenarioList({ scenarios, canEdit, sort, onSort }: ScenarioListP
   );
 }
 
-function columns(canEdit: boolean, acts: ScenarioActs): Column<ScenarioSummary>[] {
+interface ColumnOptions {
+  canEdit: boolean;
+  acts: ScenarioActs;
+  scaleYears: number;
+}
+
+function columns({ canEdit, acts, scaleYears }: ColumnOptions): Column<ScenarioSummary>[] {
   return [
     { key: 'name', header: 'Scenario', sortBy: 'name', cell: (scenario) => <ScenarioName scenario={scenario} /> },
     {
@@ -37,8 +44,15 @@ function columns(canEdit: boolean, acts: ScenarioActs): Column<ScenarioSummary>[
       sortBy: 'life',
       sortsDescendingFirst: true,
       from: 'md',
-      className: 'w-[27rem]',
+      className: 'md:w-[22rem]',
       cell: (scenario) => <ForecastShort forecast={scenario.forecast} />,
+    },
+    {
+      key: 'line',
+      header: `Life and target, 0 to ${scaleYears} years`,
+      from: 'lg',
+      className: 'w-64',
+      cell: (scenario) => <LifeLine forecast={scenario.forecast} scaleYears={scaleYears} />,
     },
     {
       key: 'updated',
