@@ -28,7 +28,7 @@ function Group({ group }: { group: CautionGroup }) {
   const [first, ...others] = group.messages;
   return (
     <div>
-      <p className="font-bold">{first}</p>
+      <p>{first}</p>
       {others.length > 0 && (
         <details>
           <summary className="text-muted hover:text-ink w-fit">

@@ -15,14 +15,16 @@ export function ChargeLedger({ scenario, forecast }: Props) {
   const [kept, setKept] = useState<{ scenario: Scenario; ledger: Ledger } | null>(null);
   if (forecast.ledger && forecast.ledger !== kept?.ledger) setKept({ scenario, ledger: forecast.ledger });
   const view = useMemo(() => (kept ? ledgerView(kept.scenario, kept.ledger) : null), [kept]);
+  // The largest line is open at first, because what it is made of is the next question. Later ones may grow past it.
+  const [openAtFirst, setOpenAtFirst] = useState<string | null>(null);
+  if (openAtFirst === null && view?.rows[0]) setOpenAtFirst(view.rows[0].id);
   const [changed, setChanged] = useState<ReadonlySet<string>>(new Set());
 
   if (!kept || !view) return <p className="text-muted min-h-64">The ledger follows the forecast in a moment.</p>;
   const toggle = (id: string): void => {
     setChanged((ids) => (ids.has(id) ? new Set([...ids].filter((other) => other !== id)) : new Set([...ids, id])));
   };
-  // The largest line is open at first, because what it is made of is the next question.
-  const isOpen = (row: LedgerRow, i: number): boolean => (i === 0) !== changed.has(row.id);
+  const isOpen = (row: LedgerRow): boolean => (row.id === openAtFirst) !== changed.has(row.id);
   return (
     <section aria-labelledby="ledger-heading" aria-busy={forecast.ledger === null}>
       <h3 id="ledger-heading" className="text-small font-extrabold">
@@ -40,20 +42,14 @@ export function ChargeLedger({ scenario, forecast }: Props) {
           </tr>
         </thead>
         <tbody>
-          {view.rows.map((row, i) => (
-            <Group
-              key={row.id}
-              row={row}
-              isOpen={isOpen(row, i)}
-              onToggle={() => toggle(row.id)}
-              largestC={largest(view.rows)}
-            />
+          {view.rows.map((row) => (
+            <Rows key={row.id} row={row} depth={0} isOpen={isOpen} onToggle={toggle} largestC={largest(view.rows)} />
           ))}
         </tbody>
         <tfoot>
           <tr className="border-line border-t font-bold">
             <td className="max-sm:hidden" />
-            <td className="py-2 pr-4 text-right">100.0 %</td>
+            <td className="py-2 pr-4 text-right whitespace-nowrap">100.0 %</td>
             <td className="py-2 pr-4">Total</td>
             <td className="max-md:hidden" />
             <td className="py-2 text-right whitespace-nowrap">{view.total}</td>
@@ -80,31 +76,43 @@ function largest(rows: readonly LedgerRow[]): number {
   return Math.max(...rows.map((row) => Math.abs(row.chargeC)));
 }
 
-interface GroupProps {
+interface RowsProps {
   row: LedgerRow;
-  isOpen: boolean;
-  onToggle: () => void;
+  /** 0 for a line of the ledger, more for what it is made of. */
+  depth: number;
+  isOpen: (row: LedgerRow) => boolean;
+  onToggle: (id: string) => void;
   largestC: number;
 }
 
-function Group({ row, isOpen, onToggle, largestC }: GroupProps) {
+/** A line and, where it is open, the lines that it is made of. */
+function Rows({ row, depth, isOpen, onToggle, largestC }: RowsProps) {
+  const canOpen = row.children.length > 0;
+  const toggle = canOpen ? { isOpen: isOpen(row), onToggle: () => onToggle(row.id) } : {};
   return (
     <>
-      <Line row={row} largestC={largestC} {...(row.children.length > 0 ? { isOpen, onToggle } : {})} />
-      {isOpen && row.children.map((child) => <Line key={child.id} row={child} largestC={largestC} isChild />)}
+      <Line row={row} depth={depth} largestC={largestC} {...toggle} />
+      {canOpen &&
+        isOpen(row) &&
+        row.children.map((child) => (
+          <Rows key={child.id} row={child} depth={depth + 1} isOpen={isOpen} onToggle={onToggle} largestC={largestC} />
+        ))}
     </>
   );
 }
 
+const INDENT = ['', 'pl-4', 'pl-8'];
+
 interface LineProps {
   row: LedgerRow;
+  depth: number;
   largestC: number;
-  isChild?: boolean;
   isOpen?: boolean;
   onToggle?: () => void;
 }
 
-function Line({ row, largestC, isChild = false, isOpen = false, onToggle }: LineProps) {
+function Line({ row, depth, largestC, isOpen = false, onToggle }: LineProps) {
+  const isChild = depth > 0;
   const width = `${Math.min(100, (Math.abs(row.chargeC) / largestC) * 100).toFixed(2)}%`;
   return (
     <tr className={`border-hair border-b align-baseline ${isChild ? 'text-muted text-small' : ''}`}>
@@ -117,7 +125,7 @@ function Line({ row, largestC, isChild = false, isOpen = false, onToggle }: Line
         </span>
       </td>
       <td className="w-20 py-1.5 pr-4 text-right whitespace-nowrap">{row.share}</td>
-      <th scope="row" className={`py-1.5 pr-4 text-left font-normal ${isChild ? 'pl-4' : ''}`}>
+      <th scope="row" className={`py-1.5 pr-4 text-left font-normal md:min-w-52 ${INDENT[depth] ?? 'pl-8'}`}>
         {onToggle ? (
           <button type="button" aria-expanded={isOpen} onClick={onToggle} className="group text-left hover:text-accent">
             {row.what}

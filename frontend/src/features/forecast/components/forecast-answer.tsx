@@ -18,18 +18,20 @@ export function ForecastAnswer({ scenario, forecast, problems, isComputing, onOp
   return (
     <>
       <Notice scenario={scenario} forecast={forecast} problems={problems} />
-      {forecast ? (
-        <ForecastSentence scenario={scenario} forecast={forecast} {...(onOpen ? { onOpen } : {})} />
-      ) : (
-        <Waiting scenario={scenario} problems={problems} isComputing={isComputing} />
-      )}
+      <div data-answer>
+        {forecast && scenario.node.parts.length > 0 ? (
+          <ForecastSentence scenario={scenario} forecast={forecast} {...(onOpen ? { onOpen } : {})} />
+        ) : (
+          <Waiting scenario={scenario} problems={problems} isComputing={isComputing && forecast === null} />
+        )}
+      </div>
     </>
   );
 }
 
 /** One line kept free above the sentence, so that a problem does not push the page down. */
 function Notice({ scenario, forecast, problems }: Pick<ForecastAnswerProps, 'scenario' | 'forecast' | 'problems'>) {
-  const restsOnly = nextMove(scenario, []);
+  const restsOnly = scenario.node.parts.length > 0 && nextMove(scenario, []);
   const text =
     forecast && problems.length > 0
       ? `Of the last complete input. ${problems.length === 1 ? 'One entry needs' : `${problems.length} entries need`} another look.`

@@ -39,7 +39,7 @@ function MonthRow({ month }: { month: RibbonMonth }) {
         {words.when}
         {words.event === '' ? '' : ` (${words.event})`}
       </th>
-      <td className="py-1 pr-3 text-right">{words.headroom}</td>
+      <td className="py-1 pr-3 text-right">{words.headroom === 'no' ? 'none' : words.headroom}</td>
       <td className="py-1 pr-3 text-right">{words.coldest}</td>
       <td className="py-1 text-right">{words.chargeLeft}</td>
     </tr>

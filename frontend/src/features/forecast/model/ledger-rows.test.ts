@@ -57,6 +57,18 @@ describe('ledgerView', () => {
     );
   });
 
+  it('ledgerView: gathers the smaller of many entries, with sums that still add up', () => {
+    const entries = PICTURE_LEDGER_ENTRIES.flatMap((entry) =>
+      entry.routineId === 'report' ? [entry, { ...entry, chargeC: '0.01' }] : [entry],
+    );
+    const report = ledgerView(pictureScenario(), { ...ledger(), entries }).rows.find((row) => row.what === 'Report');
+    const last = report?.children.at(-1);
+    expect(report?.children).toHaveLength(6);
+    expect([last?.what, last?.detail]).toEqual(['Smaller entries', '7 entries']);
+    expect(shownSum(report?.children ?? [], 'share')).toBeCloseTo(numberIn(report?.share ?? ''), 9);
+    expect(shownSum(last?.children ?? [], 'charge')).toBeCloseTo(numberIn(last?.charge ?? ''), 9);
+  });
+
   it('ledgerView: names an entry whose part is gone', () => {
     const scenario = pictureScenario((s) => (s.node.parts = s.node.parts.filter((part) => part.id !== 'leaf')));
     const rest = ledgerView(scenario, ledger()).rows.find((row) => row.id === 'rest');

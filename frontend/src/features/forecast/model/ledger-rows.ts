@@ -37,6 +37,8 @@ interface Draft {
 
 /** Rows with a smaller share than this are gathered under "Everything else", if there are at least two. */
 const SMALL_SHARE = 0.01;
+/** Lines of a group that are shown at once. */
+const FIRST_LINES = 5;
 
 /** Entries grouped for reading: each routine, rest, leakage, and what the supply takes; every sum exact. */
 export function ledgerView(scenario: Scenario, ledger: Ledger): LedgerView {
@@ -61,7 +63,8 @@ function sumOf(entries: readonly LedgerEntry[]): Sum {
 const bySize = (a: Draft, b: Draft): number => b.sum.abs().comparedTo(a.sum.abs());
 
 function groupOf(scenario: Scenario, key: string, entries: LedgerEntry[]): Draft {
-  const children = entries.map((entry, i) => lineOf(scenario, entry, `${key}/${i}`)).sort(bySize);
+  const lines = entries.map((entry, i) => lineOf(scenario, entry, `${key}/${i}`)).sort(bySize);
+  const children = gatherTail(lines, key);
   const [first] = entries;
   const isRoutine = first !== undefined && first.routineId !== null;
   const isAlone = entries.length === 1 && !isRoutine;
@@ -123,6 +126,21 @@ function perCycleCharge(chargeC: string): string {
   return formatQuantity(Number(chargeC), 'charge');
 }
 
+/** Of a long list the smaller lines come under one, so that what matters is seen at once. */
+function gatherTail(lines: Draft[], key: string): Draft[] {
+  if (lines.length <= FIRST_LINES + 1) return lines;
+  const tail = lines.slice(FIRST_LINES);
+  const sum = tail.reduce((total, line) => total.plus(line.sum), new Exact(0));
+  const gathered = {
+    id: `${key}/smaller`,
+    what: 'Smaller entries',
+    detail: linesInWords(tail.length),
+    sum,
+    children: tail,
+  };
+  return [...lines.slice(0, FIRST_LINES), gathered];
+}
+
 function gatherSmall(drafts: Draft[], total: Sum): Draft[] {
   const isSmall = (draft: Draft): boolean =>
     draft.id !== 'rest' && draft.id !== 'leakage' && draft.sum.abs().lessThan(total.abs().times(SMALL_SHARE));
@@ -131,7 +149,7 @@ function gatherSmall(drafts: Draft[], total: Sum): Draft[] {
   const rest: Draft = {
     id: 'everything-else',
     what: 'Everything else',
-    detail: linesInWords(small.reduce((count, draft) => count + Math.max(1, draft.children.length), 0)),
+    detail: small.map((draft) => draft.what).join(', '),
     sum: small.reduce((sum, draft) => sum.plus(draft.sum), new Exact(0)),
     children: small.map((draft) => ({ ...draft, children: [] })),
   };

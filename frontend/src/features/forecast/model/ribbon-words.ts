@@ -4,6 +4,7 @@ import type { RibbonMonth } from './ribbon.ts';
 
 export interface MonthWords {
   when: string;
+  /** With unit, as before the word "headroom"; "no" where there is none. */
   headroom: string;
   coldest: string;
   chargeLeft: string;
@@ -16,7 +17,7 @@ export function monthInWords(month: RibbonMonth): MonthWords {
   const events = [month.hasWarning ? 'warning' : '', month.hasEnd ? 'end' : ''].filter(Boolean);
   return {
     when: `${monthName(month.month)}, year ${month.year}`,
-    headroom: fineVolts(month.headroomV),
+    headroom: month.headroomV < 0.0005 ? 'no' : fineVolts(month.headroomV),
     coldest: celsius(month.coldestC),
     chargeLeft: percent(month.chargeLeftFraction),
     event: events.join(', '),
@@ -26,5 +27,5 @@ export function monthInWords(month: RibbonMonth): MonthWords {
 export function monthSentence(month: RibbonMonth): string {
   const { when, headroom, coldest, chargeLeft, event } = monthInWords(month);
   const tail = event === '' ? '' : `; ${event}`;
-  return `${when}: headroom ${headroom}, coldest ${coldest}, ${chargeLeft} of the charge left${tail}`;
+  return `${when}: ${headroom} headroom, coldest ${coldest}, ${chargeLeft} of the charge left${tail}`;
 }

@@ -60,7 +60,7 @@ function LaneName({ lane }: { lane: Lane }) {
     <div className="flex h-16 flex-col justify-end pr-3 pb-1.5 text-small leading-tight">
       <span className="line-clamp-2 font-semibold">{lane.name}</span>
       <span className="text-muted truncate text-[0.6875rem] tabular-nums">
-        {lane.restName} {formatCurrent(lane.restCurrentA)}
+        {formatCurrent(lane.restCurrentA)} {lane.restName}
       </span>
     </div>
   );

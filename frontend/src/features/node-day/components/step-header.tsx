@@ -57,7 +57,7 @@ export function StepHeader({ steps, selectedStepId, onSelectStep }: Props) {
             aria-pressed={isSelected}
             tabIndex={stepId === reachable ? 0 : -1}
             title={`${step.name}, ${formatDuration(step.durationS)}`}
-            className={`${place} -outline-offset-2 pt-1.5 ${isSelected ? 'border-accent border-t-3 pt-[0.1875rem]' : 'hover:text-accent'}`}
+            className={`${place} -outline-offset-2 flex flex-col items-stretch justify-start pt-1.5 ${isSelected ? 'border-accent border-t-3 pt-[0.1875rem]' : 'hover:text-accent'}`}
             style={style}
             onClick={() => onSelectStep(stepId)}
           >
