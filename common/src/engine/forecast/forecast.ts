@@ -44,17 +44,14 @@ export function forecast(scenario: Scenario, options: ForecastOptions = {}): For
 }
 
 function livedForecast(compiled: CompiledScenario, run: Run, withLedger: boolean): Forecast {
-  const { outcome, startingC, endS, spent, dekadOfLife, points } = run;
+  const { outcome, startingC, endS, spent, dekadOfLife, firstYearCellA } = run;
   const hasEnd = outcome !== 'outlives-horizon';
-  const isFailure = hasEnd && outcome !== 'shelf-life';
-  const usage = endS > 0 ? run.usage : freshYear(compiled);
-  const after = isFailure && startingC > 0 ? afterFailure(compiled, run, shelfEndS(compiled)) : null;
   const monitored = monitoring(compiled, run, hasEnd);
   const { capacityFactor, temperatureC } = run.endLoad.cold;
   const peak = peakOf(compiled, { spent, temperatureC, capacityFactor });
-  const sums = sumsOf(compiled, usage, startingC);
+  // A node that never lives has no use of its own.
+  const told = toldOf(compiled, { usage: endS > 0 ? run.usage : freshYear(compiled), startingC, withLedger });
   const falseAlarms = monitored?.falseAlarmTimesS.length ?? 0;
-  const { firstYearCellA } = run;
   return {
     ...HEAD,
     outcome,
@@ -64,15 +61,35 @@ function livedForecast(compiled: CompiledScenario, run: Run, withLedger: boolean
     ...limitedBy(compiled, run),
     chargeLeftFraction: startingC > 0 ? Math.max(0, 1 - spent) : 0,
     startingChargeC: startingC,
-    outages: after?.outages ?? [],
-    lastReportS: after?.lastReportS ?? (hasEnd ? endS : null),
-    ...sums,
-    dutyCycles: dutyCycles(compiled, usage),
+    ...reportsOf(compiled, run),
+    ...told,
     peak,
-    ledger: withLedger ? forecastLedger(compiled, usage, startingC) : null,
-    dekads: points,
+    dekads: run.points,
     warning: monitored?.warning ?? null,
-    cautions: cautionsOf(compiled, { peak, meanCurrentA: sums.meanCurrentA, firstYearCellA, falseAlarms }),
+    cautions: cautionsOf(compiled, { peak, meanCurrentA: told.meanCurrentA, firstYearCellA, falseAlarms }),
+  };
+}
+
+/** Outages and the last report: those of a failure, of a life that ends by age its end, of one without an end none. */
+function reportsOf(compiled: CompiledScenario, run: Run): Pick<Forecast, 'outages' | 'lastReportS'> {
+  const { outcome, endS, startingC } = run;
+  if (outcome === 'outlives-horizon') return { outages: [], lastReportS: null };
+  if (outcome === 'shelf-life' || startingC === 0) return { outages: [], lastReportS: endS };
+  return afterFailure(compiled, run, shelfEndS(compiled));
+}
+
+/** What use tells: mean current, shares of time, ledger. */
+function toldOf(
+  compiled: CompiledScenario,
+  { usage, startingC, withLedger }: { usage: Usage; startingC: number; withLedger: boolean },
+): Pick<Forecast, 'meanCurrentA' | 'chargePerDayC' | 'dutyCycles' | 'ledger'> {
+  const { drawnC, timeS } = usageTotals(compiled, usage, startingC);
+  const meanCurrentA = drawnC / timeS;
+  return {
+    meanCurrentA,
+    chargePerDayC: meanCurrentA * DAY_S,
+    dutyCycles: dutyCycles(compiled, usage),
+    ledger: withLedger ? forecastLedger(compiled, usage, startingC) : null,
   };
 }
 
@@ -88,16 +105,6 @@ function wintersOf({ startDekad, winterStart }: CompiledScenario, dekadOfLife: n
   return wintersPassed(startDekad, dekadOfLife + (hasPassed ? 1 : 0), winterStart);
 }
 
-function sumsOf(
-  compiled: CompiledScenario,
-  usage: Usage,
-  startingC: number,
-): { meanCurrentA: number; chargePerDayC: number } {
-  const { drawnC, timeS } = usageTotals(compiled, usage, startingC);
-  const meanCurrentA = drawnC / timeS;
-  return { meanCurrentA, chargePerDayC: meanCurrentA * DAY_S };
-}
-
 /** A node that cannot do what it is asked for has no life; what it would draw in a fresh year is told all the same. */
 function oversubscribedForecast(
   compiled: CompiledScenario,
@@ -105,11 +112,10 @@ function oversubscribedForecast(
   withLedger: boolean,
 ): Forecast {
   const { startingC, firstYearCellA } = startingCharge(compiled);
-  const usage = freshYear(compiled);
-  const sums = sumsOf(compiled, usage, startingC);
+  const told = toldOf(compiled, { usage: freshYear(compiled), startingC, withLedger });
   const { capacityFactor, temperatureC } = compiled.dekadLoad(compiled.startDekad % DEKADS).cold;
   const peak = peakOf(compiled, { spent: 0, temperatureC, capacityFactor });
-  const findings = { peak, meanCurrentA: sums.meanCurrentA, firstYearCellA, falseAlarms: 0 };
+  const findings = { peak, meanCurrentA: told.meanCurrentA, firstYearCellA, falseAlarms: 0 };
   return {
     ...HEAD,
     outcome: 'oversubscribed',
@@ -124,10 +130,8 @@ function oversubscribedForecast(
     startingChargeC: startingC,
     outages: [],
     lastReportS: null,
-    ...sums,
-    dutyCycles: dutyCycles(compiled, usage),
+    ...told,
     peak,
-    ledger: withLedger ? forecastLedger(compiled, usage, startingC) : null,
     dekads: [],
     warning: null,
     cautions: [...tooMuch, ...cautionsOf(compiled, findings)],

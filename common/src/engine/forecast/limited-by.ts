@@ -23,15 +23,20 @@ export function limitedBy(compiled: CompiledScenario, run: Run): Limited {
     criticalIntervalId: candidate ? (interval?.id ?? 'rest') : null,
   };
   if (run.isExhausted || !candidate) return { ...where, failingPartId: null, limitedBy: 'charge' };
-  const partV = throughRegulatorV(compiled.converter, candidate.limit.railV);
-  const part = compiled.program.parts[candidate.limit.partIndex];
+  return { ...where, ...limitOf(compiled, candidate) };
+}
+
+function limitOf(compiled: CompiledScenario, candidate: Candidate): Pick<Limited, 'failingPartId' | 'limitedBy'> {
+  const { converter, program } = compiled;
+  const partV = throughRegulatorV(converter, candidate.limit.railV);
+  const part = program.parts[candidate.limit.partIndex];
   if (part && partV >= candidate.limitV) {
-    return { ...where, failingPartId: part.partId, limitedBy: ofStateOrPart(compiled, candidate) };
+    return { failingPartId: part.partId, limitedBy: ofStateOrPart(compiled, candidate) };
   }
-  const { failureV, cutOffV, kind } = compiled.converter;
+  const { failureV, cutOffV, kind } = converter;
   // Without any limit only a collapse of the source can have ended it.
-  if (candidate.limitV === 0 && kind === 'none') return { ...where, failingPartId: null, limitedBy: null };
-  return { ...where, failingPartId: null, limitedBy: cutOffV > Math.max(failureV, partV) ? 'cut-off' : 'regulator' };
+  if (candidate.limitV === 0 && kind === 'none') return { failingPartId: null, limitedBy: null };
+  return { failingPartId: null, limitedBy: cutOffV > Math.max(failureV, partV) ? 'cut-off' : 'regulator' };
 }
 
 /** A limit above the part's own, or in rest, is that of the state. */

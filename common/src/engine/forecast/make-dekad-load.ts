@@ -16,6 +16,7 @@ const FASTEST_LOSS_PER_S = 1e6;
  * @param compiled The scenario.
  * @param dekadOfYear 0 to 35.
  * @returns The load of the dekad.
+ * @throws RangeError for a dekad that a year has not; a defect of the caller.
  * @example makeDekadLoad(compiled, 0).cold.cases.length
  */
 export function makeDekadLoad(compiled: CompiledScenario, dekadOfYear: number): DekadLoad {

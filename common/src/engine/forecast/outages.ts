@@ -5,6 +5,7 @@ import { DAY_S, HOUR_S } from '#common/units/si.ts';
 import type { CompiledScenario } from './compile-scenario.ts';
 import type { DekadLoad, TestConditions } from './dekad-load.ts';
 import { firstFailure } from './first-failure.ts';
+import type { Failure } from './first-failure.ts';
 import type { Outage } from './forecast.types.ts';
 import { testConditions } from './make-dekad-load.ts';
 import type { Run } from './run.types.ts';
@@ -103,15 +104,23 @@ function passDekad(
     walkOn(load.mean, startingC, { timeS: endS - start.timeS, spent }, until);
     return until.timeS;
   };
-  const failing = hoursOf(load).map((conditions) => firstFailure(source, conditions, converter.sight, range));
   const startS = timeAt(cold.spent);
+  const hours = hoursOf(load);
+  const failureIn = (conditions: TestConditions, of: typeof range): Failure | null =>
+    firstFailure(source, conditions, converter.sight, of);
   const middle = (cold.spent + range.toSpent) / 2;
-  const silent = failing.filter((failure) => failure !== null && failure.spent <= middle).length;
-  // An hour that works at the beginning of the dekad still reports in it.
-  const reports = failing.map((failure) =>
-    failure === null ? endS : failure.spent > range.fromSpent ? timeAt(failure.spent) : 0,
-  );
-  return { silence: { startS, endS, share: silent / PAIRS }, lastReportS: Math.max(startS, ...reports) };
+  const moment = { fromSpent: middle, toSpent: middle };
+  const silent = hours.filter((conditions) => failureIn(conditions, moment) !== null).length;
+  const silence = { startS, endS, share: silent / PAIRS };
+  // Mostly the warmest hour works to the end of the dekad, or no hour works at all.
+  const [warmest] = hours;
+  if (warmest && silent < PAIRS && failureIn(warmest, range) === null) return { silence, lastReportS: endS };
+  const reports = hours.map((conditions) => {
+    const failure = failureIn(conditions, range);
+    if (failure === null) return endS;
+    return failure.spent > range.fromSpent ? timeAt(failure.spent) : 0;
+  });
+  return { silence, lastReportS: Math.max(startS, ...reports) };
 }
 
 /** Joins silences that follow each other within a winter, up to the last report. */

@@ -34,7 +34,7 @@ interface Life {
  * @example runMeanCurrent(compileScenario(scenario)).endS
  */
 export function runMeanCurrent(compiled: CompiledScenario): Run {
-  const { scenario, startDekad, source, converter } = compiled;
+  const { scenario, startDekad } = compiled;
   const { startingC, firstYearCellA } = startingCharge(compiled);
   const life: Life = {
     compiled,
@@ -53,16 +53,13 @@ export function runMeanCurrent(compiled: CompiledScenario): Run {
     const before = drawnSums(life, load);
     const failure = startingC > 0 ? passDekad(life, load, Math.min((dekadOfLife + 1) * DEKAD_S, lastS)) : EMPTY;
     const { spent, timeS } = life.walk;
-    const least = failure?.testCase
-      ? failedAt(life, load, failure)
-      : leastHeadroom(source, load.cold, converter, spent);
+    const least = criticalAt(life, load, failure);
     const sums = drawnSums(life, load);
     const mean = { drawnC: sums.drawnC - before.drawnC, lostC: sums.lostC - before.lostC, timeS: timeS - fromS };
     points.push(dekadPoint(compiled, load, { startingC, spent, timeS, least, mean }));
     if (!failure && timeS < lastS) continue;
-    const lived = failure === null ? (shelfS <= HORIZON_S ? 'shelf-life' : 'outlives-horizon') : null;
     return {
-      outcome: lived ?? (timeS === 0 ? 'never-starts' : failure?.testCase ? 'undervoltage' : 'charge-exhausted'),
+      outcome: failure ? failedAs(failure, timeS) : shelfS <= HORIZON_S ? 'shelf-life' : 'outlives-horizon',
       startingC,
       firstYearCellA,
       endS: timeS,
@@ -139,11 +136,16 @@ function runOnce({ compiled, startingC, walk, usage }: Life, load: DekadLoad, ro
   return firstFailure(source, { ...load.cold, cases }, converter.sight, range);
 }
 
-/** The critical moment of a failure is the one that failed, whatever rounding makes of its headroom. */
-function failedAt({ compiled, walk }: Life, load: DekadLoad, { testCase }: Failure): Run['critical'] {
-  if (!testCase) return null;
-  const conditions = { ...load.cold, cases: [testCase] };
-  return leastHeadroom(compiled.source, conditions, compiled.converter, walk.spent);
+function failedAs({ testCase }: Failure, timeS: number): Run['outcome'] {
+  if (timeS === 0) return 'never-starts';
+  return testCase ? 'undervoltage' : 'charge-exhausted';
+}
+
+/** The critical moment; of a failure the one that failed, whatever rounding makes of its headroom. */
+function criticalAt({ compiled, walk }: Life, load: DekadLoad, failure: Failure | null): Run['critical'] {
+  const { source, converter } = compiled;
+  const conditions = failure?.testCase ? { ...load.cold, cases: [failure.testCase] } : load.cold;
+  return leastHeadroom(source, conditions, converter, walk.spent);
 }
 
 /** Charge drawn and lost so far in a calendar dekad, C. */

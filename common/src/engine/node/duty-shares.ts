@@ -29,13 +29,14 @@ export function dutyShares(program: NodeProgram, ratesPerS: readonly number[]): 
   program.routines.forEach((routine, routineIndex) => {
     const ratePerS = ratesPerS[routineIndex] ?? 0;
     for (const segment of routine.segments) {
-      const partId = program.parts[segment.partIndex]?.partId ?? '';
       const shares = byPart[segment.partIndex];
-      const share = shareOf(segment, partId);
-      const key = `${share.fromStateId ?? ''}>${share.stateId}`;
-      const known = shares?.get(key) ?? share;
-      known.share += ratePerS * segment.durationTermsS.reduce((sumS, termS) => sumS + termS, 0);
-      shares?.set(key, known);
+      const key = keyOf(segment);
+      let known = shares?.get(key);
+      if (!known) {
+        known = shareOf(segment, program.parts[segment.partIndex]?.partId ?? '');
+        shares?.set(key, known);
+      }
+      for (const termS of segment.durationTermsS) known.share += ratePerS * termS;
     }
   });
   return program.parts.flatMap(({ partId, restStateId, restDraw }, partIndex) => {
@@ -44,6 +45,10 @@ export function dutyShares(program: NodeProgram, ratesPerS: readonly number[]): 
     const share = Math.max(0, 1 - busy);
     return [{ partIndex, partId, stateId: restStateId, fromStateId: null, share, draw: restDraw }, ...shares];
   });
+}
+
+function keyOf({ activity }: Segment): string {
+  return activity.kind === 'state' ? activity.stateId : `${activity.fromStateId}>${activity.toStateId}`;
 }
 
 function shareOf({ partIndex, activity, draw }: Segment, partId: string): DutyShare {

@@ -43,22 +43,18 @@ export function openCircuitShiftV(cell: Pick<Cell, 'openCircuitTemperatureVPerK'
  * @example freshResistanceOhm([{ pulseS: 0.1, ohm: { typical: 10 } }, { pulseS: 2, ohm: { typical: 15 } }], 0.5) // 15
  */
 export function freshResistanceOhm(figures: Cell['resistanceOhm'], durationS: number): number {
-  let nearestS = Infinity;
-  let longestS = -Infinity;
-  let nearestOhm: number | null = null;
-  let longestOhm = 0;
+  let best = { pulseS: -Infinity, ohm: 0 };
   for (const { pulseS = Infinity, ohm } of figures) {
-    const isTie: boolean = pulseS === nearestS && nearestOhm !== null;
-    if (pulseS >= durationS && (pulseS < nearestS || nearestOhm === null || isTie)) {
-      nearestOhm = isTie ? Math.max(nearestOhm ?? 0, ohm.typical) : ohm.typical;
-      nearestS = pulseS;
-    }
-    if (pulseS >= longestS) {
-      longestOhm = pulseS === longestS ? Math.max(longestOhm, ohm.typical) : ohm.typical;
-      longestS = pulseS;
-    }
+    if (isNearer(pulseS, best.pulseS, durationS)) best = { pulseS, ohm: ohm.typical };
+    else if (pulseS === best.pulseS) best.ohm = Math.max(best.ohm, ohm.typical);
   }
-  return nearestOhm ?? longestOhm;
+  return best.ohm;
+}
+
+/** Whether a pulse length serves a duration better: long enough and shorter, or longer while none is long enough. */
+function isNearer(pulseS: number, thanS: number, durationS: number): boolean {
+  if (thanS >= durationS) return pulseS >= durationS && pulseS < thanS;
+  return pulseS > thanS;
 }
 
 /**
