@@ -55,7 +55,10 @@ export default defineConfig(
   js.configs.recommended,
   ...ts.configs.recommendedTypeChecked,
   {
-    languageOptions: { parserOptions: { projectService: true, tsconfigRootDir: import.meta.dirname } },
+    // One program for all areas: a third less work than one for each of their projects.
+    languageOptions: {
+      parserOptions: { project: './test/lint/tsconfig.json', tsconfigRootDir: import.meta.dirname },
+    },
     settings: { jsdoc: { mode: 'typescript' } },
   },
   {
@@ -174,4 +177,5 @@ export default defineConfig(
     extends: [ts.configs.disableTypeChecked],
     languageOptions: { globals: globals.node },
   },
+  { files: ['frontend/public/**/*.js'], languageOptions: { globals: globals.browser } },
 );
