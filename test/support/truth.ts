@@ -72,6 +72,10 @@ const UNIT_SI: Readonly<Record<string, number>> = {
   mW: 1e-3,
   W: 1,
   'kbit/s': 1e3,
+  // The evaluator returns these in the row's unit.
+  degC: 1,
+  'J/mol': 1,
+  '1/year': 1,
   percent: 1e-2,
   octets: 1,
   symbols: 1,
