@@ -2,11 +2,13 @@ import { mkdtemp, rm } from 'node:fs/promises';
 import { tmpdir } from 'node:os';
 import path from 'node:path';
 import { freePort } from '#scripts/project.js';
-import { startServer } from '#scripts/server.js';
+import { setupUrl, startServer } from '#scripts/server.js';
 
 export interface BuiltServer {
   /** For example `http://127.0.0.1:3100`. */
   origin: string;
+  /** The one-time link for the first owner that it printed; undefined where there is somebody already. */
+  setupUrl: string | undefined;
   stop: () => Promise<void>;
 }
 
@@ -23,6 +25,7 @@ export async function startBuiltServer({ databaseUrl, demoPassword, env }: Built
   const port = await freePort(3100 + Math.floor(Math.random() * 400));
   const logFolder = await mkdtemp(path.join(tmpdir(), 'overwinter-server-'));
   const demo = demoPassword === undefined ? {} : { OVERWINTER_SEED_DEMO: '1', OVERWINTER_DEMO_PASSWORD: demoPassword };
+  const logFile = path.join(logFolder, 'server.log');
   const server = startServer(
     {
       ...process.env,
@@ -33,7 +36,7 @@ export async function startBuiltServer({ databaseUrl, demoPassword, env }: Built
       ...demo,
       ...env,
     },
-    path.join(logFolder, 'server.log'),
+    logFile,
   );
   const stop = async (): Promise<void> => {
     await server.stop();
@@ -45,5 +48,5 @@ export async function startBuiltServer({ databaseUrl, demoPassword, env }: Built
     await stop();
     throw error;
   }
-  return { origin: server.origin, stop };
+  return { origin: server.origin, setupUrl: setupUrl(logFile), stop };
 }

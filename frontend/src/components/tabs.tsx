@@ -11,7 +11,7 @@ export interface Tab {
 export function Tabs({ label, tabs }: { label: string; tabs: readonly Tab[] }) {
   return (
     <nav aria-label={label} className="border-b border-hair">
-      <ul className="-mb-px flex gap-6 overflow-x-auto">
+      <ul className="-mb-px flex gap-5 overflow-x-auto sm:gap-6">
         {tabs.map((tab) => (
           <li key={tab.to}>
             <NavLink

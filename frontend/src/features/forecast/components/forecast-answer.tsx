@@ -53,13 +53,13 @@ function Waiting({
   const move = nextMove(scenario, problems);
   if (move === null || (isComputing && problems.length === 0)) {
     return (
-      <p className="text-muted min-h-[13.5rem] text-[1.4375rem] leading-[1.36] font-light">
+      <p className="text-muted min-h-[17.75rem] text-[1.4375rem] leading-[1.36] font-light">
         Computing the first forecast…
       </p>
     );
   }
   return (
-    <div className="min-h-[13.5rem]">
+    <div className="min-h-[17.75rem]">
       <p className="text-[1.4375rem] leading-[1.36] font-extrabold tracking-[-0.01em]">{move.headline}</p>
       <p className="mt-2 text-[1.1875rem] leading-[1.45] font-light">{move.detail}</p>
       {problems.length > 0 && (

@@ -24,7 +24,7 @@ export function ForecastSentence({ scenario, forecast, onOpen }: Props) {
 
   return (
     <div>
-      <p className="min-h-[13.5rem] text-[1.4375rem] leading-[1.36] font-light tracking-[-0.01em] tabular-nums">
+      <p className="min-h-[17.75rem] text-[1.4375rem] leading-[1.36] font-light tracking-[-0.01em] tabular-nums">
         {parts.map((part, i) => (
           <Piece
             key={`${i}-${part.key ?? ''}`}
