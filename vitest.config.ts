@@ -30,7 +30,9 @@ export default defineConfig({
           environment: 'node',
           include: ['test/api/**/*.test.ts'],
           globalSetup: needsPostgres,
-          testTimeout: 30_000,
+          // Each file has its own server and database; sharing the loaded modules saves a third of the time.
+          isolate: false,
+          testTimeout: 60_000,
           hookTimeout: 60_000,
         },
       },

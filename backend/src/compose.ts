@@ -43,6 +43,8 @@ export interface Ingredients {
   /** Default 12. */
   bcryptCost?: number;
   throttle?: Partial<ThrottleLimits>;
+  /** How many password hashes run and wait at once. */
+  hashing?: { maxAtOnce: number; maxWaiting: number };
   /** Seconds between removals of ended sessions; false for none. Default 900. */
   pruneSessionsEveryS?: number | false;
   /** In tests an answer that its schema does not describe is a failure. */
@@ -62,7 +64,7 @@ export interface Composition {
 export function compose(parts: Ingredients): Composition {
   const { logger, now = Date.now, throttle, sessionSecret } = parts;
   const database = new Database(parts.dataSource);
-  const passwords = new Passwords({ cost: parts.bcryptCost ?? 12, pepper: parts.passwordPepper });
+  const passwords = new Passwords({ cost: parts.bcryptCost ?? 12, pepper: parts.passwordPepper, ...parts.hashing });
   const limits = { ...THROTTLE_LIMITS, ...throttle };
   const throttling = new SignInThrottle(database, derivedKey(sessionSecret, 'account key'), limits);
   const accounts = new AccountsService(database, passwords, throttling);

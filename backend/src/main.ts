@@ -37,6 +37,11 @@ async function run(settings: Settings, logger: Logger): Promise<void> {
     webRoot: existsSync(`${WEB_ROOT}/index.html`) ? WEB_ROOT : null,
   });
   await prepare(composition, settings, logger);
+  const prune = (): void => {
+    composition.database.unit.signInAttempts.prune().catch(onPoolError);
+  };
+  prune();
+  setInterval(prune, 3_600_000).unref();
   const server = createHttpServer(composition.app);
   const port = await listen(server, settings);
   logger.info({ url: settings.publicUrl.href, host: settings.host, port }, 'listening');

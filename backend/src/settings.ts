@@ -47,12 +47,14 @@ const environment = z
     if (values.OVERWINTER_SEED_DEMO === '1' && values.OVERWINTER_DEMO_PASSWORD === undefined) {
       context.addIssue({ code: 'custom', path: ['OVERWINTER_DEMO_PASSWORD'], message: 'The demo needs a password.' });
     }
-    const url = values.OVERWINTER_PUBLIC_URL === undefined ? null : new URL(values.OVERWINTER_PUBLIC_URL);
-    if (url && url.protocol !== 'https:' && !LOOPBACK.test(url.hostname)) {
+    const address = values.OVERWINTER_PUBLIC_URL ?? '';
+    const url = URL.canParse(address) ? new URL(address) : null;
+    const isSafe = url?.protocol === 'https:' || (url?.protocol === 'http:' && LOOPBACK.test(url.hostname));
+    if (url !== null && !isSafe) {
       const message = 'Must be https: over plain http, passwords and sessions could be read on the way.';
       context.addIssue({ code: 'custom', path: ['OVERWINTER_PUBLIC_URL'], message });
     }
-    if (url === null && !LOOPBACK.test(values.HOST)) {
+    if (values.OVERWINTER_PUBLIC_URL === undefined && !LOOPBACK.test(values.HOST)) {
       const message = `Say at which https address browsers reach a server that listens on ${values.HOST}.`;
       context.addIssue({ code: 'custom', path: ['OVERWINTER_PUBLIC_URL'], message });
     }

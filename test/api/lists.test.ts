@@ -3,7 +3,8 @@ import { z } from 'zod';
 import { pageSchema, type Page } from '#common/schemas/api/common.ts';
 import { catalogueItems } from '#common/catalogue/catalogue.ts';
 import { startApi } from '#test/support/api-server.ts';
-import { buildScenario, buildStuckScenario, buildWorkspace, emailOf, signedIn } from '#test/support/api-world.ts';
+import { buildScenario, buildStuckScenario } from '#test/support/api-scenario.ts';
+import { buildWorkspace, emailOf, signedIn } from '#test/support/api-world.ts';
 
 const api = await startApi('lists');
 const north = await buildWorkspace(api, 'north');

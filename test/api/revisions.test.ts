@@ -3,7 +3,8 @@ import { forecast } from '#common/engine/index.ts';
 import type { Scenario } from '#common/engine/scenario/scenario.types.ts';
 import { fieldOf, pageOf, pathsOf } from '#test/support/api-answers.ts';
 import { startApi } from '#test/support/api-server.ts';
-import { buildScenario, buildStuckScenario, buildWorkspace, emailOf, signedIn } from '#test/support/api-world.ts';
+import { buildScenario, buildStuckScenario } from '#test/support/api-scenario.ts';
+import { buildWorkspace, emailOf, signedIn } from '#test/support/api-world.ts';
 
 const api = await startApi('revisions');
 const north = await buildWorkspace(api, 'north');

@@ -1,11 +1,14 @@
+import fc from 'fast-check';
 import { afterAll, describe, expect, test } from 'vitest';
 import { forecast } from '#common/engine/index.ts';
 import type { Scenario } from '#common/engine/scenario/scenario.types.ts';
 import { scenarioDetailSchema } from '#common/schemas/api/scenarios.ts';
 import { fieldOf, objectOf, pathsOf } from '#test/support/api-answers.ts';
 import type { ApiClient } from '#test/support/api-client.ts';
+import { arbitraryScenario } from '#test/support/arbitrary-scenario.ts';
 import { startApi } from '#test/support/api-server.ts';
-import { buildScenario, buildStuckScenario, buildWorkspace, emailOf, signedIn } from '#test/support/api-world.ts';
+import { buildScenario, buildStuckScenario } from '#test/support/api-scenario.ts';
+import { buildWorkspace, emailOf, signedIn } from '#test/support/api-world.ts';
 
 const api = await startApi('scenarios');
 const north = await buildWorkspace(api, 'north');
@@ -130,7 +133,7 @@ describe('PUT /scenarios/:scenarioId', () => {
     expect(rows.map(({ number }) => number)).toEqual(Array.from({ length: 17 }, (_, at) => at + 1));
     expect(new Set(rows.map(({ note }) => note)).size).toBe(17);
     expect((await engineer.get(path)).body).toMatchObject({ version: 17, revision: 17 });
-  });
+  }, 120_000);
 
   test('a save and an archiving at once on one version: one of them is told', async () => {
     const { path } = await create();
@@ -161,6 +164,20 @@ describe('PUT /scenarios/:scenarioId', () => {
     expect(JSON.stringify(large).length).toBeGreaterThan(400_000);
     const { path } = await create(large);
     expect((await engineer.get(path)).body.document).toEqual(large);
+  });
+});
+
+describe('random documents', () => {
+  test('come back bit for bit, with the forecast that the engine makes of what was sent', async () => {
+    for (const document of fc.sample(arbitraryScenario({ maxParts: 3, maxRoutines: 3 }), {
+      numRuns: 12,
+      seed: 20261201,
+    })) {
+      const { path } = await create(document);
+      const { body } = await engineer.get(path);
+      expect(body.document).toEqual(document);
+      expect(body.forecast).toMatchObject({ lifeS: forecast(document, { withLedger: false }).lifeS });
+    }
   });
 });
 

@@ -2,7 +2,8 @@ import { randomUUID } from 'node:crypto';
 import type { Route } from '#backend/http/route.ts';
 import { PASSWORD } from './api-client.ts';
 import type { ApiServer } from './api-server.ts';
-import { buildScenario, emailOf, type Workspace } from './api-world.ts';
+import { buildScenario } from './api-scenario.ts';
+import { emailOf, type Workspace } from './api-world.ts';
 
 export type PathIds = Record<'projectId' | 'scenarioId' | 'itemId' | 'revision', string>;
 

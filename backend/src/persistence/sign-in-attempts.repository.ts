@@ -82,6 +82,7 @@ export class SignInAttemptsRepository {
     await this.#manager.delete(SignInAttemptEntity, { id });
   }
 
+  /** Removes what no window reaches any more. */
   async prune(): Promise<void> {
     await this.#manager.query(
       `DELETE FROM sign_in_attempts WHERE at < now() - CASE WHEN succeeded THEN interval '30 days' ELSE interval '1 hour' END`,

@@ -78,7 +78,9 @@ interface Segment {
 
 function wordOf({ document, part, list, segment, next, isOfStep }: Segment): string {
   if (list === 'states' && isOfStep) return `state of “${nameIn(document.node.parts, String(segment))}”`;
-  if (typeof segment === 'string') return segment in ITEMS ? '' : fieldWords(segment);
+  // The item that follows says it.
+  if (segment in ITEMS || (segment === 'months' && list === 'climate')) return '';
+  if (typeof segment === 'string') return fieldWords(segment);
   if (list === 'months') return MONTHS[segment] ?? `month ${segment + 1}`;
   if (list === 'transitions') {
     const states = child(part, 'states');
