@@ -162,9 +162,11 @@ function Message({ id, isCell, message, hint, children }: MessageProps) {
   }
   return (
     <div className="flex min-h-6 flex-wrap items-baseline gap-x-3 pt-1 text-small">
-      <p id={id} className={message === undefined ? 'text-muted' : 'text-rust'}>
-        {message ?? hint}
-      </p>
+      {(message ?? hint) !== undefined && (
+        <p id={id} className={message === undefined ? 'text-muted' : 'text-rust'}>
+          {message ?? hint}
+        </p>
+      )}
       {children}
     </div>
   );

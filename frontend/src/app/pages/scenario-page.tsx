@@ -91,7 +91,7 @@ function ScenarioFrame({ scenarioId, project, kept: keptAtFirst }: ScenarioFrame
     <LiveForecastProvider serverProblems={status.kind === 'failed' ? status.problems : NO_PROBLEMS}>
       <ScenarioName project={project} />
       <ScenarioHeader saving={saving} isKept={isKept} />
-      <div className="page">
+      <div className="page wide:max-w-[104rem]">
         <Notices kept={kept} onSettled={() => setKept(null)} saving={saving} />
         <div className="mt-5 lg:grid lg:grid-cols-[minmax(0,1fr)_minmax(17rem,21.5rem)] lg:gap-x-12 wide:gap-x-16">
           <div className="min-w-0">

@@ -95,21 +95,13 @@ export function TextFieldOf({ value, change, editLabel, isOptional = false, maxL
 export function PlainText({ label, text, isCell, align, children }: Omit<BoundProps, 'field'> & { text: string }) {
   const shown = text === '' ? '—' : text;
   if (isCell) {
-    return (
-      <div className={`flex min-h-9 items-center gap-1.5 px-1.5 ${align === 'right' ? 'justify-end' : ''}`}>
-        <span>{shown}</span>
-        {children}
-      </div>
-    );
+    return <div className={`flex min-h-9 items-center px-1.5 ${align === 'right' ? 'justify-end' : ''}`}>{shown}</div>;
   }
   return (
     <div>
       <p className="text-small text-muted">{label}</p>
-      <p className="flex items-baseline gap-1.5 py-1.5 font-semibold">
-        {shown}
-        {children}
-      </p>
-      <p className="min-h-5" />
+      <p className="py-1.5 font-semibold">{shown}</p>
+      <div className="flex min-h-6 items-baseline gap-x-3 pt-1 text-small">{children}</div>
     </div>
   );
 }

@@ -68,7 +68,7 @@ export function ChoiceField<T extends string>(props: ChoiceFieldProps<T>) {
       ) : (
         <p
           id={`${id}-note`}
-          className={`min-h-5 pt-1 text-small ${problem === undefined ? 'text-muted' : 'text-rust'}`}
+          className={`min-h-6 pt-1 text-small ${problem === undefined ? 'text-muted' : 'text-rust'}`}
         >
           {problem ?? hint}
         </p>

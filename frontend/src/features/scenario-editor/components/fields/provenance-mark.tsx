@@ -29,7 +29,7 @@ export function ProvenanceMark({ label, quantity, change }: ProvenanceMarkProps)
         onClick={() => setOpen(true)}
         title={text ?? PROVENANCE_KINDS.find(({ value }) => value === kind)?.explanation}
         aria-label={`${label}: ${provenanceWord(kind)}${text === undefined ? '' : `, ${text}`}`}
-        className={`rounded-sm px-1 py-0.5 text-small whitespace-nowrap underline decoration-dotted underline-offset-4 hover:decoration-solid ${kind === 'assumed' ? 'font-semibold text-caution italic' : 'text-muted'}`}
+        className={`rounded-sm py-0.5 text-small whitespace-nowrap underline decoration-dotted underline-offset-4 hover:decoration-solid ${kind === 'assumed' ? 'font-semibold text-caution italic' : 'text-muted'}`}
       >
         {provenanceWord(kind)}
       </button>

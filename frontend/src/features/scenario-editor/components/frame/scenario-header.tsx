@@ -26,18 +26,19 @@ export function ScenarioHeader({ saving, isKept }: ScenarioHeaderProps) {
   const isReadOnly = useIsReadOnly();
   return (
     <div className="sticky top-0 z-20 border-b border-hair bg-paper">
-      <div className="page flex flex-wrap items-center gap-x-6 gap-y-1 py-2">
+      <div className="page flex flex-wrap items-center gap-x-4 wide:max-w-[104rem] py-2 sm:gap-x-6">
         <h1 className="sr-only">{name}</h1>
-        <div className="min-w-52 flex-1 text-lg [&_p]:hidden [&_label]:sr-only [&_input]:truncate [&_input]:border-transparent">
+        <div className="-ml-1.5 min-w-0 basis-2/3 text-lg font-semibold sm:flex-1 sm:basis-0">
           <TextFieldOf
             field="name"
+            isCell
             label="Name of the scenario"
             value={name}
             change={(document, next) => ({ ...document, name: next })}
           />
         </div>
-        <SaveState saving={saving} isKept={isKept} />
         {!isReadOnly && <HistoryButtons />}
+        <SaveState saving={saving} isKept={isKept} />
         {!isReadOnly && <SaveButtons saving={saving} />}
       </div>
     </div>
@@ -62,7 +63,7 @@ function SaveState({ saving, isKept }: ScenarioHeaderProps) {
     <p
       role="status"
       title={`Revision ${saved.revision}, saved ${dateAndTime(saved.savedAt)} by ${saved.savedBy}`}
-      className={`text-small ${isChanged && status.kind !== 'saving' ? 'text-caution' : 'text-muted'}`}
+      className={`max-sm:flex-1 sm:order-none text-small ${isChanged && status.kind !== 'saving' ? 'text-caution' : 'text-muted'}`}
     >
       {text}
       {isReadOnly && ', for reading'}
@@ -76,7 +77,7 @@ function HistoryButtons() {
   const redoLabel = useEditorState((state) => state.future.at(-1)?.label);
   const announcement = useEditorState((state) => state.announcement);
   return (
-    <div role="group" aria-label="History" className="flex items-center">
+    <div role="group" aria-label="History" className="flex items-center max-sm:ml-auto sm:order-1">
       <IconButton
         label={undoLabel === undefined ? 'Undo' : `Undo: ${undoLabel}`}
         aria-keyshortcuts="Control+Z"
@@ -125,7 +126,7 @@ function SaveButtons({ saving }: { saving: Saving }) {
     setNoting(false);
   };
   return (
-    <div className="flex items-center gap-3">
+    <div className="flex items-center gap-3 sm:order-2">
       <button
         type="button"
         disabled={!isChanged}

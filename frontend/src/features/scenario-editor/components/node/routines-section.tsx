@@ -105,8 +105,8 @@ function RoutineHead({ routine }: { routine: Routine }) {
   const removal = useRemoval();
   const { id, name } = routine;
   return (
-    <div className="flex flex-wrap items-start gap-x-6">
-      <div className="min-w-48 flex-1">
+    <div className="flex items-start gap-x-4 sm:gap-x-6">
+      <div className="min-w-0 flex-1">
         <TextFieldOf
           field={`node.routines.${id}.name`}
           label="Name of the routine"
@@ -114,7 +114,7 @@ function RoutineHead({ routine }: { routine: Routine }) {
           change={(document, next) => updateRoutine(document, id, (before) => ({ ...before, name: next }))}
         />
       </div>
-      <label className="flex min-h-10 items-center gap-2 pt-4">
+      <label className="flex min-h-10 items-center gap-2 pt-5 whitespace-nowrap">
         <input
           type="checkbox"
           className="size-4 accent-[var(--accent)]"
