@@ -95,7 +95,7 @@ function ScenarioFrame({ scenarioId, project, kept: keptAtFirst }: ScenarioFrame
         <Notices kept={kept} onSettled={() => setKept(null)} saving={saving} />
         <div className="mt-5 lg:grid lg:grid-cols-[minmax(0,1fr)_minmax(17rem,21.5rem)] lg:gap-x-12 wide:gap-x-16">
           <div className="min-w-0">
-            <div className="lg:hidden">
+            <div className="mb-4 lg:hidden">
               <SentenceOnTop />
             </div>
             <Tabs
