@@ -11,9 +11,9 @@ import {
 // How fine each kind of figure is told in a forecast: no finer than data sheets are.
 
 export const volts = (voltageV: number): string => formatVoltage(voltageV, { significantDigits: 2 });
-/** For comparing voltages with each other. */
+/** For comparing voltages with each other: in steps of 10 mV from 1 V, of 1 mV below. */
 export const fineVolts = (voltageV: number): string =>
-  formatVoltage(Math.round(voltageV * 1e3) / 1e3, { significantDigits: 3 });
+  formatVoltage(Math.round(voltageV * 1e3) / 1e3, { significantDigits: 3, keepZeros: Math.abs(voltageV) >= 1 });
 export const amps = (currentA: number): string => formatCurrent(currentA);
 export const seconds = (durationS: number): string => formatDuration(durationS);
 export const charge = (chargeC: number): string => formatChargeMah(chargeC, { significantDigits: 3 });
