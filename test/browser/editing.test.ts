@@ -113,7 +113,10 @@ describe('pasting a table from a spreadsheet', () => {
     await preview.getByRole('button', { name: /^Paste/ }).click();
     expect(await field(page, `${STOPPED}, maximum`).inputValue()).toBe('1.4 mA');
     expect(await field(page, `${RUNNING}, typical`).inputValue()).toBe('3.1 mA');
-    const added = page.getByRole('table', { name: `States of ${PART}` }).getByRole('row').last();
+    const added = page
+      .getByRole('table', { name: `States of ${PART}` })
+      .getByRole('row')
+      .last();
     expect(await added.getByRole('textbox', { name: /: current, typical$/ }).inputValue()).toBe('250 nA');
     expect(await rowNames(`States of ${PART}`)).toHaveLength(4);
   });
