@@ -1,6 +1,6 @@
 import { act, fireEvent, screen, waitFor } from '@testing-library/react';
 import { afterEach, describe, expect, it } from 'vitest';
-import { watchSession } from '#frontend/features/session/api/session.ts';
+import { useSignOut, watchSession } from '#frontend/features/session/api/session.ts';
 import { api, nothing } from '#frontend/lib/api-client.ts';
 import { buildSession, mockApi, problem, renderRoutes, resetUi } from '#test/support/ui.tsx';
 import { SignInPage } from './pages/sign-in-page.tsx';
@@ -18,6 +18,11 @@ const ROUTES = [
     ],
   },
 ];
+
+function SignOut() {
+  const signOut = useSignOut();
+  return <button onClick={() => signOut.mutate()}>leave</button>;
+}
 
 describe('SignedInOnly', () => {
   it('shows the page to who is signed in', async () => {
@@ -52,6 +57,19 @@ describe('SignedInOnly', () => {
       await api.get('/projects', nothing).catch(() => undefined);
     });
     await waitFor(() => expect(screen.getByRole('heading', { name: 'Sign in' })).toBeTruthy());
+  });
+
+  it('does not return to the page of somebody who signed out', async () => {
+    mockApi(({ method }) => ({ body: buildSession(method === 'DELETE' ? null : 'engineer') }));
+    const children = [{ path: '/scenarios/:id', element: <SignOut /> }];
+    const routes = [
+      { path: '/sign-in', element: <SignInPage /> },
+      { element: <SignedInOnly />, children },
+    ];
+    const { router } = renderRoutes(routes, '/scenarios/1');
+    fireEvent.click(await screen.findByRole('button', { name: 'leave' }));
+    await screen.findByRole('heading', { name: 'Sign in' });
+    expect(router.state.location.search).toBe('');
   });
 
   it('offers to try again when the server does not answer', async () => {

@@ -1,10 +1,11 @@
 import { Navigate, Outlet, useLocation } from 'react-router-dom';
 import { ErrorState, Loading } from '#frontend/components/states.tsx';
-import { useSessionQuery } from '#frontend/features/session/api/session.ts';
+import { useHasLeft, useSessionQuery } from '#frontend/features/session/api/session.ts';
 
 /** Sends everyone else to the sign-in, which leads back here. */
 export function SignedInOnly() {
   const session = useSessionQuery();
+  const hasLeft = useHasLeft();
   const { pathname, search, hash } = useLocation();
   if (session.isPending) {
     return (
@@ -26,7 +27,12 @@ export function SignedInOnly() {
   }
   if (!session.data.user || !session.data.workspace) {
     const next = pathname + search + hash;
-    return <Navigate to={next === '/projects' ? '/sign-in' : `/sign-in?next=${encodeURIComponent(next)}`} replace />;
+    return (
+      <Navigate
+        to={hasLeft || next === '/projects' ? '/sign-in' : `/sign-in?next=${encodeURIComponent(next)}`}
+        replace
+      />
+    );
   }
   return <Outlet />;
 }

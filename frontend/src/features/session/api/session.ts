@@ -4,6 +4,9 @@ import { api, onSignedOut, setCsrfToken } from '#frontend/lib/api-client.ts';
 
 export const SESSION_KEY = ['session'];
 
+/** Set while nobody is signed in because somebody signed out: then no page is to be returned to. */
+const HAS_LEFT_KEY = ['session', 'has-left'];
+
 export function useSessionQuery() {
   return useQuery({ queryKey: SESSION_KEY, queryFn: fetchSession, staleTime: 5 * 60_000 });
 }
@@ -28,8 +31,17 @@ export function useSignOut() {
   const client = useQueryClient();
   return useMutation({
     mutationFn: () => api.delete('/session', undefined, sessionSchema),
-    onSuccess: (session) => startSession(client, session),
+    onSuccess: (session) => {
+      client.setQueryData(HAS_LEFT_KEY, true);
+      keepSession(client, session);
+      client.removeQueries({ predicate: isNoSession });
+    },
   });
+}
+
+/** Whether the last session here was ended on purpose, rather than by the server. */
+export function useHasLeft(): boolean {
+  return useQueryClient().getQueryData(HAS_LEFT_KEY) === true;
 }
 
 export function useSelectWorkspace() {
@@ -61,6 +73,7 @@ async function fetchSession(): Promise<Session> {
 
 /** Nothing that one person has seen stays in the cache for the next. */
 function startSession(client: QueryClient, session: Session): void {
+  client.removeQueries({ queryKey: HAS_LEFT_KEY });
   keepSession(client, session);
   client.removeQueries({ predicate: isNoSession });
 }
