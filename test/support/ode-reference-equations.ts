@@ -55,7 +55,8 @@ function calendarOf({ climate }: Scenario): Dekad[] {
     const after = climate.months[(Math.floor(middle) + 13) % 12];
     if (!before || !after) throw new Error('A climate has twelve months.');
     const share = middle - Math.floor(middle);
-    const meanC = before.meanC * (1 - share) + after.meanC * share;
+    // Typed thresholds of a schedule are met to nine decimals.
+    const meanC = Number((before.meanC * (1 - share) + after.meanC * share).toFixed(9));
     const amplitudeK = before.amplitudeK * (1 - share) + after.amplitudeK * share;
     const month = Math.floor(index / 3) + 1;
     const coldest = climate.extremes?.coldest;

@@ -38,7 +38,7 @@ export function dekadsOfYear({ months, extremes }: Pick<Climate, 'months' | 'ext
     const share = ((dekadOfYear + 2) % 3) / 3;
     const from = months[fromMonth] ?? { meanC: 0, amplitudeK: 0 };
     const to = months[(fromMonth + 1) % 12] ?? from;
-    const meanC = from.meanC + share * (to.meanC - from.meanC);
+    const meanC = rounded(from.meanC + share * (to.meanC - from.meanC));
     const amplitudeK = from.amplitudeK + share * (to.amplitudeK - from.amplitudeK);
     const month = Math.floor(dekadOfYear / 3) + 1;
     const isMiddle = dekadOfYear % 3 === 1;
@@ -54,3 +54,6 @@ export function dekadsOfYear({ months, extremes }: Pick<Climate, 'months' | 'ext
     };
   });
 }
+
+/** To a billionth of a kelvin, so that a mean of 8 °C between typed months meets a typed threshold of 8 °C. */
+const rounded = (temperatureC: number): number => Math.round(temperatureC * 1e9) / 1e9;

@@ -50,21 +50,20 @@ export function candidateLists(
   isAlways: (routineIndex: number) => boolean,
 ): CandidateLists {
   const { intervals, rest, restLimit } = context.loads;
-  let grounds: Candidate[] = [candidate(context, { vector: rest, limit: restLimit, source: null })];
+  const atRest = { vector: rest, limit: restLimit, source: null, ...electrics(context, restLimit, Infinity) };
+  let grounds: Candidate[] = [atRest];
   const always = new Map<number, IntervalLoad[]>();
+  const others: IntervalLoad[] = [];
   for (const load of intervals) {
-    if (!isOn(load.routineIndex) || !isAlways(load.routineIndex)) continue;
-    const known = always.get(load.routineIndex) ?? [];
-    known.push(load);
-    always.set(load.routineIndex, known);
+    if (!isOn(load.routineIndex)) continue;
+    if (!isAlways(load.routineIndex)) others.push(load);
+    else always.set(load.routineIndex, [...(always.get(load.routineIndex) ?? []), load]);
   }
   // Each moment lies in one interval of each `always` routine: combine them.
-  for (const loads of always.values()) {
-    grounds = uncovered(grounds.flatMap((ground) => loads.map((load) => added(context, ground, load))));
-  }
-  const others = intervals.filter(({ routineIndex }) => isOn(routineIndex) && !isAlways(routineIndex));
-  const all = others.flatMap((load) => grounds.map((ground) => added(context, ground, load)));
-  return { all: uncovered([...all, ...grounds]), rest: grounds };
+  for (const loads of always.values()) grounds = uncovered(context, grounds, loads);
+  const all = uncovered(context, grounds, others);
+  for (const ground of grounds) keep(all, ground);
+  return { all, rest: grounds };
 }
 
 /**
@@ -82,44 +81,50 @@ export function routineCandidates(
   routineIndex: number,
 ): Candidate[] {
   const own = context.loads.intervals.filter((load) => load.routineIndex === routineIndex);
-  return uncovered(own.flatMap((load) => grounds.map((ground) => added(context, ground, load))));
+  return uncovered(context, grounds, own);
 }
 
-function candidate(
+function electrics(
   { converter, resistanceOhm, resistanceFactor }: CandidateContext,
-  { vector, limit, source }: Pick<Candidate, 'vector' | 'limit' | 'source'>,
-): Candidate {
-  const durationS = source?.interval.durationS ?? Infinity;
-  return {
-    vector,
-    limit,
-    limitV: cellLimitV(converter, limit.railV),
-    freshOhm: freshResistanceOhm(resistanceOhm, durationS) * resistanceFactor,
-    source,
-  };
+  limit: RailLimit,
+  durationS: number,
+): Pick<Candidate, 'limitV' | 'freshOhm'> {
+  const freshOhm = freshResistanceOhm(resistanceOhm, durationS) * resistanceFactor;
+  return { limitV: cellLimitV(converter, limit.railV), freshOhm };
 }
 
-/** An interval on top of a ground, told as the interval itself. */
-function added(context: CandidateContext, ground: Candidate, load: IntervalLoad): Candidate {
-  const vector = new Float64Array(ground.vector);
-  for (let index = 0; index < vector.length; index++) vector[index] = (vector[index] ?? 0) + (load.excess[index] ?? 0);
-  // A limit of plain rest is already in the interval's own, less the parts that it occupies.
-  const isStronger = ground.source !== null && ground.limit.railV > load.limit.railV;
-  const limit = isStronger ? ground.limit : load.limit;
-  return candidate(context, { vector, limit, source: load });
-}
-
-/** Drops candidates that an earlier or stronger one covers; the order of those that stay is kept. */
-function uncovered(candidates: readonly Candidate[]): Candidate[] {
+/** Intervals on top of grounds, told as the intervals themselves, without those that another one covers. */
+function uncovered(
+  context: CandidateContext,
+  grounds: readonly Candidate[],
+  loads: readonly IntervalLoad[],
+): Candidate[] {
+  const { width, intervalExcess } = context.loads;
   const kept: Candidate[] = [];
-  for (const next of candidates) {
-    if (kept.some((strong) => covers(strong, next))) continue;
-    let at = 0;
-    for (const strong of kept) if (!covers(next, strong)) kept[at++] = strong;
-    kept.length = at;
-    kept.push(next);
+  let vector = new Float64Array(width);
+  for (const load of loads) {
+    for (const ground of grounds) {
+      for (let at = 0; at < width; at++) {
+        vector[at] = (ground.vector[at] ?? 0) + (intervalExcess[load.offset + at] ?? 0);
+      }
+      // A limit of plain rest is already in the interval's own, less the parts that it occupies.
+      const isStronger = ground.source !== null && ground.limit.railV > load.limit.railV;
+      const limit = isStronger ? ground.limit : load.limit;
+      const next = { vector, limit, source: load, ...electrics(context, limit, load.interval.durationS) };
+      if (keep(kept, next)) vector = new Float64Array(width);
+    }
   }
   return kept;
+}
+
+/** Adds a candidate unless one that is there covers it, and drops those that it covers; the order of the others is kept. */
+function keep(kept: Candidate[], next: Candidate): boolean {
+  for (const strong of kept) if (covers(strong, next)) return false;
+  let at = 0;
+  for (const weak of kept) if (!covers(next, weak)) kept[at++] = weak;
+  kept.length = at;
+  kept.push(next);
+  return true;
 }
 
 function covers(strong: Candidate, weak: Candidate): boolean {

@@ -197,7 +197,9 @@ function falseAlarmCaution(count: number): Caution {
  * @returns A caution for each routine longer than its period and each part busy for more than all the time; none: enough time.
  * @example oversubscribed(compiled).length === 0
  */
-export function oversubscribed({ program, onByDekad, ratesPerS, scenario }: CompiledScenario): Caution[] {
+export function oversubscribed(compiled: CompiledScenario): Caution[] {
+  const { program, onByDekad, ratesPerS, scenario } = compiled;
+  if (hasTimeForAll(compiled)) return [];
   const found = new Map<string, Caution>();
   for (const { isOn } of new Set(onByDekad)) {
     const rates = program.routines.map((_, index) => (isOn[index] === true ? (ratesPerS[index] ?? 0) : 0));
@@ -216,4 +218,16 @@ export function oversubscribed({ program, onByDekad, ratesPerS, scenario }: Comp
     }
   }
   return [...found.values()];
+}
+
+/** Whether even one after the other all routines find the time, as they do in most nodes. */
+function hasTimeForAll({ program, ratesPerS }: CompiledScenario): boolean {
+  let busyShare = 0;
+  program.routines.forEach(({ schedule, intervals, cycleS }, index) => {
+    const last = intervals.at(-1);
+    const spanS = Math.max(cycleS, last ? last.startS + last.durationS : 0);
+    const ratePerS = schedule.kind === 'window' ? 1 / schedule.periodS : (ratesPerS[index] ?? 0);
+    busyShare += spanS * ratePerS;
+  });
+  return busyShare <= 1;
 }

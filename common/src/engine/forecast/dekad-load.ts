@@ -47,7 +47,7 @@ export interface DekadLoad {
   /** Cycles per second by routine while it is on in this dekad, otherwise 0. */
   ratesPerS: Float64Array;
   /** Factor by temperature group, averaged over the day. */
-  meanFactors: Float64Array;
+  meanFactors: number[];
   capacityFactor: number;
   openCircuitShiftV: number;
   mean: MeanLoad;

@@ -60,6 +60,31 @@ export function firstFailure(
   return toDepth >= 1 ? { spent: capacityFactor, testCase: null } : null;
 }
 
+/**
+ * Whether everything works at one charge.
+ *
+ * @param source Tables of the pack.
+ * @param conditions Conditions of the tests.
+ * @param sight What loads see of the cell's voltage.
+ * @param spent Share of the starting charge that is spent.
+ * @returns Whether there is charge left, and every case holds its limit.
+ * @example worksAt(source, conditions, sight, 0)
+ */
+export function worksAt(
+  source: SourceTables,
+  { capacityFactor, openCircuitShiftV, cases }: TestConditions,
+  sight: LoadSight,
+  spent: number,
+): boolean {
+  if (spent >= capacityFactor) return false;
+  const point = sourceAt(source, spent / capacityFactor, { openCircuitV: 0, resistanceFactor: 0 });
+  const openCircuitV = point.openCircuitV + openCircuitShiftV;
+  for (const { load, limitV, ohm } of cases) {
+    if (!(loadedVoltageV(load, sight, openCircuitV, ohm * point.resistanceFactor) >= limitV)) return false;
+  }
+  return true;
+}
+
 /** The case that fails first along a stretch; resistances of the stretch are factors yet. */
 function firstOf(
   cases: readonly TestCase[],

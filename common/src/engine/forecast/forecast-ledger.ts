@@ -136,7 +136,7 @@ function drawC(
   return chargeC;
 }
 
-const ONE_GROUP = Float64Array.of(1);
+const ONE_GROUP = [1];
 
 /** Current at the cell of a draw at the moment of a routine that runs once, A. */
 function onceA(compiled: CompiledScenario, { dekadOfYear, seenV }: OnceEvent, draw: Draw): number {

@@ -89,14 +89,12 @@ export function groupFactors(
   groups: readonly TemperatureGroup[],
   temperatureC: number,
   amplitudeK: number,
-): Float64Array {
-  const factors = new Float64Array(groups.length);
-  groups.forEach(({ referenceTemperatureC, doublingK }, index) => {
+): number[] {
+  return groups.map(({ referenceTemperatureC, doublingK }) => {
     const aboveReferenceK = temperatureC - referenceTemperatureC;
     const factor = doublingK === Infinity ? 1 : dayAverageOfPower(2, doublingK, { aboveReferenceK, amplitudeK });
-    factors[index] = factor < LARGEST_FACTOR ? factor : LARGEST_FACTOR;
+    return factor < LARGEST_FACTOR ? factor : LARGEST_FACTOR;
   });
-  return factors;
 }
 
 /** A load as seen at its own voltage u: `constantA + powerW/u + conductanceS·u`. */
@@ -115,7 +113,7 @@ export interface RailLoad {
  * @returns The load at the temperature of the factors.
  * @example weighGroups(rest, 0, factors).constantA
  */
-export function weighGroups(vector: Float64Array, offset: number, factors: Float64Array): RailLoad {
+export function weighGroups(vector: Float64Array, offset: number, factors: readonly number[]): RailLoad {
   let constantA = 0;
   let powerW = 0;
   let conductanceS = 0;

@@ -43,7 +43,7 @@ export function makeDekadLoad(compiled: CompiledScenario, dekadOfYear: number): 
 
 function meanLoad(
   { loads, monitorA, converter, scenario, source }: CompiledScenario,
-  given: { rates: Float64Array; meanFactors: Float64Array; capacityFactor: number; shiftV: number } & Pick<
+  given: { rates: Float64Array; meanFactors: number[]; capacityFactor: number; shiftV: number } & Pick<
     DekadLoad,
     'dekad'
   >,

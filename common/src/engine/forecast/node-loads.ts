@@ -12,6 +12,8 @@ export interface NodeLoads {
   /** Charge per cycle in excess of rest by routine: the vectors times s. */
   cycleExcess: Float64Array;
   intervals: IntervalLoad[];
+  /** Vectors of the intervals, in excess of rest. One array for all: a hundred small ones cost more than what they hold. */
+  intervalExcess: Float64Array;
   /** Lowest rail voltage of all parts at rest, V, and the part that sets it (−1: none). */
   restLimit: RailLimit;
 }
@@ -25,7 +27,8 @@ export interface RailLimit {
 export interface IntervalLoad {
   interval: Interval;
   routineIndex: number;
-  excess: Float64Array;
+  /** Where its vector, in excess of rest, begins in `NodeLoads.intervalExcess`. */
+  offset: number;
   limit: RailLimit;
 }
 
@@ -43,7 +46,7 @@ export function nodeLoads(program: NodeProgram): NodeLoads {
   const draws = [...program.parts.map(({ restDraw }) => restDraw), ...program.leakages.map(({ draw }) => draw)];
   for (const draw of draws) addDraw(rest, 0, { draw, group: groupOf(groups, draw) }, 1);
   const loads = { groups, width, rest, restLimit: restLimitOf(program) };
-  return { ...loads, cycleExcess: cycleExcess(program, loads), intervals: intervalLoads(program, loads) };
+  return { ...loads, cycleExcess: cycleExcess(program, loads), ...intervalLoads(program, loads) };
 }
 
 function cycleExcess(program: NodeProgram, { groups, width }: Pick<NodeLoads, 'groups' | 'width'>): Float64Array {
@@ -64,21 +67,24 @@ function cycleExcess(program: NodeProgram, { groups, width }: Pick<NodeLoads, 'g
 function intervalLoads(
   program: NodeProgram,
   { groups, width, restLimit }: Pick<NodeLoads, 'groups' | 'width' | 'restLimit'>,
-): IntervalLoad[] {
+): Pick<NodeLoads, 'intervals' | 'intervalExcess'> {
   const loads: IntervalLoad[] = [];
   program.routines.forEach(({ intervals }, routineIndex) => {
     for (const interval of intervals) {
       if (!(interval.durationS > 0)) continue;
-      const excess = new Float64Array(width);
-      for (const { partIndex, draw } of interval.occupants) {
-        addDraw(excess, 0, { draw, group: groupOf(groups, draw) }, 1);
-        const restDraw = program.parts[partIndex]?.restDraw;
-        if (restDraw) addDraw(excess, 0, { draw: restDraw, group: groupOf(groups, restDraw) }, -1);
-      }
-      loads.push({ interval, routineIndex, excess, limit: limitOf(program, interval, restLimit) });
+      const limit = limitOf(program, interval, restLimit);
+      loads.push({ interval, routineIndex, offset: loads.length * width, limit });
     }
   });
-  return loads;
+  const intervalExcess = new Float64Array(loads.length * width);
+  for (const { interval, offset } of loads) {
+    for (const { partIndex, draw } of interval.occupants) {
+      addDraw(intervalExcess, offset, { draw, group: groupOf(groups, draw) }, 1);
+      const restDraw = program.parts[partIndex]?.restDraw;
+      if (restDraw) addDraw(intervalExcess, offset, { draw: restDraw, group: groupOf(groups, restDraw) }, -1);
+    }
+  }
+  return { intervals: loads, intervalExcess };
 }
 
 function restLimitOf(program: NodeProgram): RailLimit {

@@ -4,8 +4,7 @@ import { temperatureAtHour } from '../supply/day-average.ts';
 import { DAY_S, HOUR_S } from '#common/units/si.ts';
 import type { CompiledScenario } from './compile-scenario.ts';
 import type { DekadLoad, TestConditions } from './dekad-load.ts';
-import { firstFailure } from './first-failure.ts';
-import type { Failure } from './first-failure.ts';
+import { firstFailure, worksAt } from './first-failure.ts';
 import type { Outage } from './forecast.types.ts';
 import { testConditions } from './make-dekad-load.ts';
 import type { Run } from './run.types.ts';
@@ -106,17 +105,18 @@ function passDekad(
   };
   const startS = timeAt(cold.spent);
   const hours = hoursOf(load);
-  const failureIn = (conditions: TestConditions, of: typeof range): Failure | null =>
-    firstFailure(source, conditions, converter.sight, of);
+  const { sight } = converter;
   const middle = (cold.spent + range.toSpent) / 2;
-  const moment = { fromSpent: middle, toSpent: middle };
-  const silent = hours.filter((conditions) => failureIn(conditions, moment) !== null).length;
+  const silent = hours.filter((conditions) => !worksAt(source, conditions, sight, middle)).length;
   const silence = { startS, endS, share: silent / PAIRS };
-  // Mostly the warmest hour works to the end of the dekad, or no hour works at all.
+  // Mostly the warmest hour works to the end of the dekad, or no hour works from its beginning.
   const [warmest] = hours;
-  if (warmest && silent < PAIRS && failureIn(warmest, range) === null) return { silence, lastReportS: endS };
+  if (warmest && worksAt(source, warmest, sight, range.toSpent)) return { silence, lastReportS: endS };
+  if (hours.every((conditions) => !worksAt(source, conditions, sight, range.fromSpent))) {
+    return { silence, lastReportS: startS };
+  }
   const reports = hours.map((conditions) => {
-    const failure = failureIn(conditions, range);
+    const failure = firstFailure(source, conditions, sight, range);
     if (failure === null) return endS;
     return failure.spent > range.fromSpent ? timeAt(failure.spent) : 0;
   });

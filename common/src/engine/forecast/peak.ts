@@ -7,6 +7,7 @@ import type { CompiledScenario } from './compile-scenario.ts';
 import { cellLoad } from './converter.ts';
 import type { Peak } from './forecast.types.ts';
 import { groupFactors, weighGroups } from './load-vector.ts';
+import type { RailLoad } from './load-vector.ts';
 import type { IntervalLoad } from './node-loads.ts';
 import { sourceAt } from './source-tables.ts';
 
@@ -70,16 +71,27 @@ function currentsAt(compiled: CompiledScenario, moment: PeakMoment, always: read
   const temperatureFactor = resistanceTemperatureFactor(cell.resistanceFactorByTemperature, moment.temperatureC);
   const packFactor = pack.resistanceFactor * temperatureFactor * point.resistanceFactor;
   const factors = groupFactors(loads.groups, moment.temperatureC, 0);
+  const rest = weighGroups(loads.rest, 0, factors);
   return (intervals) => {
-    const vector = new Float64Array(loads.rest);
-    const running = always.filter((load) => intervals.every(({ routineIndex }) => routineIndex !== load.routineIndex));
-    for (const { excess } of [...intervals, ...running]) {
-      for (let at = 0; at < vector.length; at++) vector[at] = (vector[at] ?? 0) + (excess[at] ?? 0);
+    const rail = { ...rest };
+    let durationS = Infinity;
+    for (const load of intervals) {
+      addLoad(rail, weighGroups(loads.intervalExcess, load.offset, factors));
+      durationS = Math.min(durationS, load.interval.durationS);
     }
-    const load = cellLoad(converter, weighGroups(vector, 0, factors));
-    const durationS = Math.min(...intervals.map(({ interval }) => interval.durationS));
-    return currentUnder(compiled, load, openCircuitV, freshResistanceOhm(cell.resistanceOhm, durationS) * packFactor);
+    for (const load of always) {
+      if (intervals.some(({ routineIndex }) => routineIndex === load.routineIndex)) continue;
+      addLoad(rail, weighGroups(loads.intervalExcess, load.offset, factors));
+    }
+    const ohm = freshResistanceOhm(cell.resistanceOhm, durationS) * packFactor;
+    return currentUnder(compiled, cellLoad(converter, rail), openCircuitV, ohm);
   };
+}
+
+function addLoad(sum: RailLoad, { constantA, powerW, conductanceS }: RailLoad): void {
+  sum.constantA += constantA;
+  sum.powerW += powerW;
+  sum.conductanceS += conductanceS;
 }
 
 /** Current in operation; where the source collapses, what it would take without any resistance. */

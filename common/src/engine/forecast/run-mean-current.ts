@@ -120,7 +120,10 @@ function passStretch(
   usage.perVoltS[dekad] = (usage.perVoltS[dekad] ?? 0) + walk.perVoltS - perVoltS;
   usage.voltS[dekad] = (usage.voltS[dekad] ?? 0) + walk.voltS - voltS;
   usage.leftS[dekad] = (usage.leftS[dekad] ?? 0) + passedS - (walk.spentS - spentS);
-  stretches.push({ load, fromS: timeS, toS: walk.timeS, fromSpent: spent, toSpent: walk.spent });
+  // Only a monitor looks back.
+  if (compiled.scenario.supply.lowBattery) {
+    stretches.push({ load, fromS: timeS, toS: walk.timeS, fromSpent: spent, toSpent: walk.spent });
+  }
   return failure;
 }
 
@@ -152,7 +155,8 @@ function criticalAt({ compiled, walk }: Life, load: DekadLoad, failure: Failure 
 function drawnSums({ usage, startingC }: Life, load: DekadLoad): { drawnC: number; lostC: number } {
   const { constantA, powerW, conductanceS } = load.mean.load;
   const dekad = load.dekad.dekadOfYear;
-  const onceC = usage.once.reduce((sumC, { dekadOfYear, chargeC }) => sumC + (dekadOfYear === dekad ? chargeC : 0), 0);
+  let onceC = 0;
+  for (const { dekadOfYear, chargeC } of usage.once) if (dekadOfYear === dekad) onceC += chargeC;
   return {
     drawnC:
       onceC +

@@ -39,6 +39,7 @@ export interface Run {
   critical: LeastHeadroom | null;
   isExhausted: boolean;
   points: DekadPoint[];
+  /** Kept where the supply has a monitor. */
   stretches: Stretch[];
   usage: Usage;
 }
