@@ -58,7 +58,7 @@ describe('forecast in the browser and on the server', () => {
       ({ url, scenario }) =>
         new Promise((resolve) => {
           const worker = new Worker(url, { type: 'module' });
-          worker.addEventListener('message', ({ data }) => {
+          worker.addEventListener('message', ({ data }: MessageEvent<{ forecast: unknown; problems: unknown }>) => {
             worker.terminate();
             resolve(data);
           });

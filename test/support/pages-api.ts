@@ -3,10 +3,11 @@ import type { Scenario } from '#common/engine/index.ts';
 
 /** GETs from the API with the session of a page, as JSON. */
 export async function getJson(page: Page, path: string): Promise<unknown> {
-  return page.evaluate(async (address) => {
+  return page.evaluate(async (address): Promise<unknown> => {
     const response = await fetch(address);
     if (!response.ok) throw new Error(`${address} answered ${response.status}`);
-    return response.json();
+    const body: unknown = await response.json();
+    return body;
   }, `/api/v1${path}`);
 }
 

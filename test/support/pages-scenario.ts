@@ -1,7 +1,6 @@
 import type { Locator, Page } from 'playwright-core';
 
-const TABS = ['Node', 'Supply', 'Climate', 'Target', 'Revisions'] as const;
-export type ScenarioTab = (typeof TABS)[number];
+export type ScenarioTab = 'Node' | 'Supply' | 'Climate' | 'Target' | 'Revisions';
 
 /** Makes a project on the page of projects and stays on its page. */
 export async function makeProject(page: Page, name: string): Promise<void> {
