@@ -1,4 +1,6 @@
+import type { QueryRunner } from 'typeorm';
 import { afterAll, afterEach, describe, expect, test } from 'vitest';
+import { z } from 'zod';
 import { ApiClient, PASSWORD } from '#test/support/api-client.ts';
 import { startApi } from '#test/support/api-server.ts';
 import { buildWorkspace, emailOf } from '#test/support/api-world.ts';
@@ -21,6 +23,13 @@ async function statuses(count: number, send: (index: number) => ReturnType<typeo
   const all: number[] = [];
   for (let index = 0; index < count; index += 1) all.push((await send(index)).status);
   return all;
+}
+
+async function countWaiting(runner: QueryRunner): Promise<unknown> {
+  const rows: unknown = await runner.query(
+    'SELECT count(*)::int AS n FROM pg_locks l JOIN pg_database d ON d.oid = l.database AND d.datname = current_database() WHERE NOT granted',
+  );
+  return z.tuple([z.object({ n: z.int() })]).parse(rows)[0].n;
 }
 
 const repeat = (status: number, count: number): number[] => Array.from({ length: count }, () => status);
@@ -61,8 +70,16 @@ describe('POST /session', () => {
   });
 
   test('attempts sent at once are counted like attempts in a row', async () => {
-    const answers = await Promise.all(Array.from({ length: 12 }, () => attempt('192.0.2.1')));
-    expect(answers.map(({ status }) => status).sort()).toEqual([...repeat(401, 5), ...repeat(429, 7)]);
+    // Nobody can note an attempt before all have had the chance to count those before them.
+    const blocker = api.dataSource.createQueryRunner();
+    await blocker.startTransaction();
+    await blocker.query('LOCK TABLE sign_in_attempts IN EXCLUSIVE MODE');
+    const underWay = Promise.all(Array.from({ length: 10 }, () => attempt('192.0.2.1')));
+    await expect.poll(() => countWaiting(blocker), { timeout: 20_000 }).toBeGreaterThanOrEqual(9);
+    await blocker.commitTransaction();
+    await blocker.release();
+    const answers = await underWay;
+    expect(answers.map(({ status }) => status).sort()).toEqual([...repeat(401, 5), ...repeat(429, 5)]);
   });
 
   test('guessing from many addresses is refused, but not where the owner was signed in lately', async () => {

@@ -29,7 +29,7 @@ const GENEROUS = { perAccountAndAddress: 1_000, perAddress: 10_000, perAccount: 
 /** A server on a database of its own, with the real engine and catalogue, fast password hashes and no throttle. */
 export async function startApi(name: string, overrides: Partial<Ingredients> = {}): Promise<ApiServer> {
   const database = await createTestDatabase(name);
-  const dataSource = await createDataSource(database.url, { poolSize: 6 }).initialize();
+  const dataSource = await createDataSource(database.url, { poolSize: 12 }).initialize();
   const sessionPool = createSessionPool(database.url, () => undefined);
   const { destination, lines } = memoryLog();
   const composition = compose({
