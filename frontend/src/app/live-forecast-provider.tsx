@@ -4,8 +4,10 @@ import { useLiveForecast } from '#frontend/features/forecast/hooks/use-live-fore
 import { NO_FORECAST, type LiveForecastState } from '#frontend/features/forecast/model/live-forecast.ts';
 import { ProblemProvider, useEditorState } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
 import { useFieldProblems } from '#frontend/features/scenario-editor/hooks/use-field-problems.ts';
+import { useSettled } from '#frontend/features/scenario-editor/hooks/use-settled.ts';
 
 const LiveForecastContext = createContext<LiveForecastState>(NO_FORECAST);
+const EngineProblemsContext = createContext<readonly InputProblem[]>(NO_FORECAST.problems);
 
 interface LiveForecastProviderProps {
   /** Problems that the server found when the document was saved. */
@@ -20,11 +22,14 @@ interface LiveForecastProviderProps {
 export function LiveForecastProvider({ serverProblems, children }: LiveForecastProviderProps) {
   const document = useEditorState((state) => state.document);
   const live = useLiveForecast(document);
-  const problems = useMemo(() => [...live.problems, ...serverProblems], [live.problems, serverProblems]);
+  const engineProblems = useSettled(live.problems);
+  const problems = useMemo(() => [...engineProblems, ...serverProblems], [engineProblems, serverProblems]);
   const fields = useFieldProblems(problems);
   return (
     <LiveForecastContext value={live}>
-      <ProblemProvider problems={fields}>{children}</ProblemProvider>
+      <EngineProblemsContext value={engineProblems}>
+        <ProblemProvider problems={fields}>{children}</ProblemProvider>
+      </EngineProblemsContext>
     </LiveForecastContext>
   );
 }
@@ -34,7 +39,7 @@ export function useForecastOnPage(): LiveForecastState {
   return useDeferredValue(use(LiveForecastContext));
 }
 
-/** The engine's complaints about the present document, at once. */
-export function useForecastProblems(): InputProblem[] {
-  return use(LiveForecastContext).problems;
+/** The engine's complaints about the present document, at once; the same list as long as they are the same. */
+export function useForecastProblems(): readonly InputProblem[] {
+  return use(EngineProblemsContext);
 }

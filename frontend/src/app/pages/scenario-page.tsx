@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { memo, useDeferredValue, useState } from 'react';
 import { Outlet, useLocation, useNavigate, useParams } from 'react-router-dom';
 import type { ScenarioDetail } from '#common/schemas/api/scenarios.ts';
 import { Breadcrumb } from '#frontend/components/frame-slots.tsx';
@@ -157,17 +157,22 @@ function Notices({ kept, onSettled, saving }: { kept: KeptWork | null; onSettled
   );
 }
 
+// Pictures are drawn again only when what they show has changed: a keystroke does not wait for them.
+const AnswerPicture = memo(ForecastAnswer);
+const PanelPicture = memo(ForecastPanel);
+const DetailsPicture = memo(ForecastDetails);
+
 function SentenceOnTop() {
-  return <ForecastAnswer {...useAnswer()} />;
+  return <AnswerPicture {...useAnswer()} />;
 }
 
 function Answer() {
-  return <ForecastPanel {...useAnswer()} isSentenceElsewhere />;
+  return <PanelPicture {...useAnswer()} isSentenceElsewhere />;
 }
 
 function useAnswer(): ForecastAnswerProps {
-  const edited = useEditorState((state) => state.document);
   const { forecast, scenario, problems, isComputing } = useForecastOnPage();
+  const edited = useDeferredValue(useEditorState((state) => state.document));
   return { scenario: scenario ?? edited, forecast, problems, isComputing };
 }
 
@@ -176,7 +181,7 @@ function Details() {
   if (!forecast || !scenario) return null;
   return (
     <div className="mt-12">
-      <ForecastDetails scenario={scenario} forecast={forecast} />
+      <DetailsPicture scenario={scenario} forecast={forecast} />
     </div>
   );
 }

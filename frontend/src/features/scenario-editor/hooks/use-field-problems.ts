@@ -1,18 +1,16 @@
-import { useMemo, useState } from 'react';
+import { useMemo } from 'react';
 import type { InputProblem } from '#common/schemas/problem.ts';
 import { fieldOfPath } from '../model/fields.ts';
-import { isSameValue } from '../model/same-value.ts';
+import { problemWords } from '../model/problem-words.ts';
 import { useEditorStore } from './editor-context.tsx';
+import { useSettled } from './use-settled.ts';
 
 /** Problems by the field they belong to; the same map as long as they are the same, so that fields do not render anew. */
 export function useFieldProblems(problems: readonly InputProblem[]): ReadonlyMap<string, string> {
   const store = useEditorStore();
-  const [kept, setKept] = useState(problems);
-  const isSame = kept === problems || isSameValue(kept, problems);
-  if (!isSame) setKept(problems);
-  const settled = isSame ? kept : problems;
+  const settled = useSettled(problems);
   return useMemo(() => {
     const { document } = store.getState();
-    return new Map(settled.map(({ path, message }) => [fieldOfPath(document, path), message]));
+    return new Map(settled.map((problem) => [fieldOfPath(document, problem.path), problemWords(document, problem)]));
   }, [store, settled]);
 }

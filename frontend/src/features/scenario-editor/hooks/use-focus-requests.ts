@@ -30,8 +30,11 @@ export function useFocusRequests(current: EditorTab | 'revisions', openTab: (tab
 }
 
 function fieldElement(field: string): HTMLElement | null {
+  const within = (prefix: string): HTMLElement | null =>
+    document.querySelector<HTMLElement>(`[data-field^="${CSS.escape(`${prefix}.`)}"]`);
   const exact = document.querySelector<HTMLElement>(`[data-field="${CSS.escape(field)}"]`);
-  return exact ?? document.querySelector<HTMLElement>(`[data-field^="${CSS.escape(`${field}.`)}"]`);
+  // A minimum or maximum that is not shown leads to the typical value beside it.
+  return exact ?? within(field) ?? within(field.replace(/\.(min|max)$/, ''));
 }
 
 function focusAndShow(target: HTMLElement): void {

@@ -13,6 +13,8 @@ const SUFFIXES: readonly (readonly [RegExp, Dimension, string?])[] = [
   [/PerDay$/, 'rate-per-day'],
   [/(Ohm|ohm)$/, 'resistance'],
   [/Hz$/, 'frequency'],
+  [/Kg$/, 'mass'],
+  [/M3$/, 'volume'],
   [/Octets$|^octets$/, 'octets'],
   [/^(capacityC|chargePerReadingC)$/, 'charge', 'mAh'],
   [/(belowC|aboveC|BelowC|meanC|temperatureC|referenceC|TemperatureC|lowestC|highestC)$/, 'temperature'],
@@ -31,10 +33,15 @@ export function valueWords(change: Pick<Change, 'path'>, value: unknown): string
   if (typeof value === 'boolean') return value ? 'yes' : 'no';
   if (typeof value === 'string') {
     const kind = PROVENANCE_KINDS.find((row) => row.value === value);
-    return kind && change.path.endsWith('provenance.kind') ? provenanceWord(kind.value) : `“${value}”`;
+    return kind && change.path.endsWith('provenance.kind') ? provenanceWord(kind.value) : `“${shortened(value)}”`;
   }
   if (Array.isArray(value)) return `${value.length} rows`;
   return typeof value === 'object' && value !== null ? objectWords(change.path, value) : null;
+}
+
+/** Long notes are told by their beginning. */
+function shortened(text: string): string {
+  return text.length > 60 ? `${text.slice(0, 58).trimEnd()} …` : text;
 }
 
 function objectWords(path: string, value: object): string | null {

@@ -10,7 +10,7 @@ export function GridMessage({ fieldPrefix }: { fieldPrefix: string }) {
   const messages = [...unsettled.map(([, { message }]) => message), ...others.map(([, message]) => message)];
   const [first, ...rest] = messages;
   return (
-    <p role="status" className="min-h-6 pt-1 text-small text-rust">
+    <p role="status" className="min-h-11 pt-1 text-small text-rust sm:min-h-6">
       {first}
       {rest.length > 0 && ` And ${rest.length} more cell${rest.length === 1 ? '' : 's'}.`}
     </p>

@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { memo, useDeferredValue, useMemo, useState } from 'react';
 import type { Quantity } from '#common/engine/scenario/scenario.types.ts';
 import type { Dimension } from '#common/units/dimensions.table.ts';
 import { formatQuantity } from '#common/units/format-quantity.ts';
@@ -9,7 +9,13 @@ import {
   useEditorStore,
   useIsReadOnly,
 } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
-import { assumeMaxima, missingMaxima, type FigureKind } from '#frontend/features/scenario-editor/model/quantities.ts';
+import {
+  assumeMaxima,
+  missingMaxima,
+  type FigureKind,
+  type MissingMaximum,
+} from '#frontend/features/scenario-editor/model/quantities.ts';
+import { useSettled } from '#frontend/features/scenario-editor/hooks/use-settled.ts';
 import { Section } from './section.tsx';
 
 const DIMENSION_OF: Record<FigureKind, Dimension> = {
@@ -26,12 +32,16 @@ const SHOWN_AT_FIRST = 6;
 
 /** Figures of which nobody has said how bad they can get, with a way to assume it. */
 export function MaximaSection() {
+  const document = useDeferredValue(useEditorState((state) => state.document));
+  const missing = useMemo(() => missingMaxima(document), [document]);
+  return <MissingMaxima missing={useSettled(missing)} />;
+}
+
+const MissingMaxima = memo(function MissingMaxima({ missing }: { missing: readonly MissingMaximum[] }) {
   const store = useEditorStore();
   const isReadOnly = useIsReadOnly();
-  const document = useEditorState((state) => state.document);
   const [factor, setFactor] = useState<number | undefined>(1.5);
   const [isAllShown, setAllShown] = useState(false);
-  const missing = missingMaxima(document);
   const times = factor ?? 1.5;
   const assume = (label: string, fields?: ReadonlySet<string>): void =>
     store.edit({ label, change: (before) => assumeMaxima(before, times, fields) });
@@ -68,29 +78,8 @@ export function MaximaSection() {
             </div>
           )}
           <ul className="border-t border-hair">
-            {shown.map(({ site, quantity }) => (
-              <li
-                key={site.field}
-                className="flex flex-wrap items-center justify-between gap-x-4 border-b border-hair py-1"
-              >
-                <button
-                  type="button"
-                  className="min-w-0 text-left hover:underline hover:underline-offset-4"
-                  onClick={() => store.focusField(`${site.field}.max`)}
-                >
-                  {site.label} <span className="text-muted">{amount(quantity, site.kind)}</span>
-                </button>
-                {!isReadOnly && (
-                  <button
-                    type="button"
-                    className="link min-h-9 text-small"
-                    aria-label={`Assume a maximum for ${site.label}`}
-                    onClick={() => assume(`assume the maximum of ${site.label}`, new Set([site.field]))}
-                  >
-                    max = {amount({ typical: quantity.typical * times }, site.kind)}, assumed
-                  </button>
-                )}
-              </li>
+            {shown.map((figure) => (
+              <MissingRow key={figure.site.field} figure={figure} times={times} assume={assume} />
             ))}
           </ul>
           {missing.length > SHOWN_AT_FIRST && (
@@ -101,6 +90,38 @@ export function MaximaSection() {
         </>
       )}
     </Section>
+  );
+});
+
+interface MissingRowProps {
+  figure: MissingMaximum;
+  times: number;
+  assume: (label: string, fields: ReadonlySet<string>) => void;
+}
+
+function MissingRow({ figure: { site, quantity }, times, assume }: MissingRowProps) {
+  const store = useEditorStore();
+  const isReadOnly = useIsReadOnly();
+  return (
+    <li className="flex flex-wrap items-center justify-between gap-x-4 border-b border-hair py-1">
+      <button
+        type="button"
+        className="min-w-0 text-left hover:underline hover:underline-offset-4"
+        onClick={() => store.focusField(`${site.field}.max`)}
+      >
+        {site.label} <span className="text-muted">{amount(quantity, site.kind)}</span>
+      </button>
+      {!isReadOnly && (
+        <button
+          type="button"
+          className="link min-h-9 text-small"
+          onClick={() => assume(`assume the maximum of ${site.label}`, new Set([site.field]))}
+        >
+          max = {amount({ typical: quantity.typical * times }, site.kind)}, assumed
+          <span className="sr-only"> for {site.label}</span>
+        </button>
+      )}
+    </li>
   );
 }
 

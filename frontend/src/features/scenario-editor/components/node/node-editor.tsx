@@ -1,3 +1,4 @@
+import { memo } from 'react';
 import type { InputProblem } from '#common/schemas/problem.ts';
 import { LeakagesGrid } from './leakages-grid.tsx';
 import { MaximaSection } from './maxima-section.tsx';
@@ -6,7 +7,7 @@ import { RoutinesSection } from './routines-section.tsx';
 import { Section } from './section.tsx';
 
 /** Everything about the node that can be edited, from what it does to what it is made of. */
-export function NodeEditor({ problems }: { problems: readonly InputProblem[] }) {
+export const NodeEditor = memo(function NodeEditor({ problems }: { problems: readonly InputProblem[] }) {
   return (
     <>
       <RoutinesSection problems={problems} />
@@ -17,4 +18,4 @@ export function NodeEditor({ problems }: { problems: readonly InputProblem[] }) 
       <MaximaSection />
     </>
   );
-}
+});
