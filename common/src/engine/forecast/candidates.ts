@@ -1,4 +1,5 @@
 import { freshResistanceOhm } from '../supply/cell-figures.ts';
+import type { CellLoad } from '../supply/cell-load.ts';
 import type { Cell } from '../scenario/scenario.types.ts';
 import { cellLimitV } from './converter.ts';
 import type { Converter } from './converter.ts';
@@ -15,6 +16,8 @@ export interface Candidate {
   freshOhm: number;
   /** The interval, null for rest. */
   source: IntervalLoad | null;
+  /** Its load on the cell, once made, where nothing depends on temperature. */
+  fixedLoad?: CellLoad;
 }
 
 export interface CandidateContext {

@@ -85,11 +85,7 @@ export function addDraw(
  * @returns Factor by group; 1 for the first.
  * @example groupFactors(groups, 25, 0)[0] // 1
  */
-export function groupFactors(
-  groups: readonly TemperatureGroup[],
-  temperatureC: number,
-  amplitudeK: number,
-): number[] {
+export function groupFactors(groups: readonly TemperatureGroup[], temperatureC: number, amplitudeK: number): number[] {
   return groups.map(({ referenceTemperatureC, doublingK }) => {
     const aboveReferenceK = temperatureC - referenceTemperatureC;
     const factor = doublingK === Infinity ? 1 : dayAverageOfPower(2, doublingK, { aboveReferenceK, amplitudeK });

@@ -1,5 +1,6 @@
 import { capacityTemperatureFactor, openCircuitShiftV, resistanceTemperatureFactor } from '../supply/cell-figures.ts';
 import { selfDischargeRatePerS } from '../supply/self-discharge-rate.ts';
+import type { CellLoad } from '../supply/cell-load.ts';
 import type { Candidate } from './candidates.ts';
 import type { CompiledScenario } from './compile-scenario.ts';
 import { cellLoad } from './converter.ts';
@@ -114,11 +115,13 @@ export function testCases(
   candidates: readonly Candidate[],
   temperatureC: number,
 ): TestCase[] {
-  const factors = groupFactors(loads.groups, temperatureC, 0);
   const { resistanceFactorByTemperature } = scenario.supply.cell;
   const resistanceFactor = resistanceTemperatureFactor(resistanceFactorByTemperature, temperatureC);
+  const isFixed = loads.groups.length === 1;
+  const factors = groupFactors(loads.groups, temperatureC, 0);
+  const loadOf = ({ vector }: Candidate): CellLoad => cellLoad(converter, weighGroups(vector, 0, factors));
   return candidates.map((candidate) => ({
-    load: cellLoad(converter, weighGroups(candidate.vector, 0, factors)),
+    load: isFixed ? (candidate.fixedLoad ??= loadOf(candidate)) : loadOf(candidate),
     limitV: candidate.limitV,
     ohm: candidate.freshOhm * resistanceFactor,
     candidate,

@@ -50,15 +50,17 @@ function cut(from: Knot, to: Knot, sight: LoadSight): MeanPiece[] {
   const corners = [sight.ceilingV + sight.dropV, LEAST_SEEN_V + sight.dropV].filter(
     (cornerV) => (cornerV - from.cellV) * (cornerV - to.cellV) < 0,
   );
+  if (corners.length === 0) return [pieceOf(from, to, sight)];
   const spentAt = (cellV: number): number =>
     from.spent + ((cellV - from.cellV) / (to.cellV - from.cellV)) * (to.spent - from.spent);
   const knots = [from, ...corners.map((cellV) => ({ spent: spentAt(cellV), cellV })), to];
   knots.sort((a, b) => a.spent - b.spent);
-  return knots.slice(1).map((end, index) => {
-    const start = knots[index] ?? from;
-    const seenV = seenVoltageV(sight, start.cellV);
-    const span = end.spent - start.spent;
-    const slopeV = span > 0 ? (seenVoltageV(sight, end.cellV) - seenV) / span : 0;
-    return { fromSpent: start.spent, toSpent: end.spent, seenV, slopeV };
-  });
+  return knots.slice(1).map((end, index) => pieceOf(knots[index] ?? from, end, sight));
+}
+
+function pieceOf(from: Knot, to: Knot, sight: LoadSight): MeanPiece {
+  const seenV = seenVoltageV(sight, from.cellV);
+  const span = to.spent - from.spent;
+  const slopeV = span > 0 ? (seenVoltageV(sight, to.cellV) - seenV) / span : 0;
+  return { fromSpent: from.spent, toSpent: to.spent, seenV, slopeV };
 }

@@ -105,6 +105,8 @@ function passDekad(
   };
   const startS = timeAt(cold.spent);
   const hours = hoursOf(load);
+  // Until the coldest hour fails all hours work; where it fails from the beginning nothing is known yet.
+  const coldReportS = startS > start.timeS ? startS : 0;
   const { sight } = converter;
   const middle = (cold.spent + range.toSpent) / 2;
   const silent = hours.filter((conditions) => !worksAt(source, conditions, sight, middle)).length;
@@ -113,14 +115,14 @@ function passDekad(
   const [warmest] = hours;
   if (warmest && worksAt(source, warmest, sight, range.toSpent)) return { silence, lastReportS: endS };
   if (hours.every((conditions) => !worksAt(source, conditions, sight, range.fromSpent))) {
-    return { silence, lastReportS: startS };
+    return { silence, lastReportS: coldReportS };
   }
   const reports = hours.map((conditions) => {
     const failure = firstFailure(source, conditions, sight, range);
     if (failure === null) return endS;
     return failure.spent > range.fromSpent ? timeAt(failure.spent) : 0;
   });
-  return { silence, lastReportS: Math.max(startS, ...reports) };
+  return { silence, lastReportS: Math.max(coldReportS, ...reports) };
 }
 
 /** Joins silences that follow each other within a winter, up to the last report. */

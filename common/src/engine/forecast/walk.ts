@@ -173,6 +173,9 @@ function addNode(
 function isRough(step: Step, piece: MeanPiece, from: number, to: number): boolean {
   const speedRatio = speedAt(step, piece, to) / speedAt(step, piece, from);
   const voltageRatio = seenAt(piece, to) / seenAt(piece, from);
-  const isWide = (ratio: number): boolean => ratio > LARGEST_RATIO || ratio < 1 / LARGEST_RATIO;
   return isWide(speedRatio) || isWide(voltageRatio);
+}
+
+function isWide(ratio: number): boolean {
+  return ratio > LARGEST_RATIO || ratio < 1 / LARGEST_RATIO;
 }
