@@ -58,7 +58,7 @@ export class LibraryRepository {
         ...(content === undefined ? {} : { content: () => ':content', kind: content.kind }),
         ...(archived === undefined ? {} : { archivedAt: archived ? () => 'COALESCE(archived_at, now())' : null }),
         version: () => 'version + 1',
-        updatedAt: () => 'now()',
+        updatedAt: () => 'clock_timestamp()',
       })
       .setParameter('content', content === undefined ? null : JSON.stringify(content))
       .andWhere('id = :id AND version = :version', { id, version })

@@ -53,7 +53,7 @@ export class ProjectsRepository {
         ...changes,
         ...(archived === undefined ? {} : { archivedAt: archived ? () => 'COALESCE(archived_at, now())' : null }),
         version: () => 'version + 1',
-        updatedAt: () => 'now()',
+        updatedAt: () => 'clock_timestamp()',
       })
       .andWhere('id = :id AND version = :version', { id, version })
       .execute();

@@ -81,7 +81,7 @@ export class ScenariosRepository {
         lifeOrderS: lifeOrderS(forecast),
         version: () => 'version + 1',
         currentRevision: () => 'current_revision + 1',
-        updatedAt: () => 'now()',
+        updatedAt: () => 'clock_timestamp()',
       })
       .andWhere('id = :id AND version = :version', { id, version })
       .returning('current_revision')
@@ -94,7 +94,7 @@ export class ScenariosRepository {
       .update(ScenarioEntity, {
         archivedAt: change.archived ? () => 'COALESCE(archived_at, now())' : null,
         version: () => 'version + 1',
-        updatedAt: () => 'now()',
+        updatedAt: () => 'clock_timestamp()',
         updatedById: change.by,
       })
       .andWhere('id = :id AND version = :version', { id, version })

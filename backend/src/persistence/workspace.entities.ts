@@ -4,7 +4,8 @@ import type { Scenario } from '#common/engine/scenario/scenario.types.ts';
 import type { LibraryContent, LibraryKind } from '#common/schemas/api/library.ts';
 import { MembershipEntity, WorkspaceEntity } from './accounts.entities.ts';
 
-const now = () => 'now()';
+/** Not `now()`, which stands still during a transaction: rows made in one keep their order. */
+const now = () => 'clock_timestamp()';
 /** Orders by `lower(name)` need expression indexes, which the schema builder cannot describe: made by the migration alone. */
 const byMigration = { synchronize: false } as const;
 

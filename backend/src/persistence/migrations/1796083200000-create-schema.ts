@@ -56,8 +56,8 @@ const WORKSPACE_DATA = `
     description text NOT NULL DEFAULT '',
     version integer NOT NULL DEFAULT 1 CONSTRAINT projects_version_check CHECK (version > 0),
     archived_at timestamptz,
-    created_at timestamptz NOT NULL DEFAULT now(),
-    updated_at timestamptz NOT NULL DEFAULT now(),
+    created_at timestamptz NOT NULL DEFAULT clock_timestamp(),
+    updated_at timestamptz NOT NULL DEFAULT clock_timestamp(),
     CONSTRAINT projects_id_workspace_key UNIQUE (id, workspace_id)
   );
   CREATE INDEX projects_name_idx ON projects (workspace_id, (lower(name) COLLATE "C"), id);
@@ -77,8 +77,8 @@ const WORKSPACE_DATA = `
     target_life_s double precision,
     life_order_s double precision,
     archived_at timestamptz,
-    created_at timestamptz NOT NULL DEFAULT now(),
-    updated_at timestamptz NOT NULL DEFAULT now(),
+    created_at timestamptz NOT NULL DEFAULT clock_timestamp(),
+    updated_at timestamptz NOT NULL DEFAULT clock_timestamp(),
     updated_by uuid NOT NULL,
     CONSTRAINT scenarios_version_check CHECK (version > 0 AND current_revision > 0),
     CONSTRAINT scenarios_id_workspace_key UNIQUE (id, workspace_id),
@@ -101,7 +101,7 @@ const WORKSPACE_DATA = `
     life_s double precision,
     end_month integer,
     target_life_s double precision,
-    created_at timestamptz NOT NULL DEFAULT now(),
+    created_at timestamptz NOT NULL DEFAULT clock_timestamp(),
     CONSTRAINT revisions_number_check CHECK (number > 0 AND restored_from < number),
     CONSTRAINT revisions_pkey PRIMARY KEY (scenario_id, number),
     CONSTRAINT revisions_scenario_fkey FOREIGN KEY (scenario_id, workspace_id) REFERENCES scenarios (id, workspace_id),
@@ -120,8 +120,8 @@ const WORKSPACE_DATA = `
     content jsonb NOT NULL,
     version integer NOT NULL DEFAULT 1 CONSTRAINT library_items_version_check CHECK (version > 0),
     archived_at timestamptz,
-    created_at timestamptz NOT NULL DEFAULT now(),
-    updated_at timestamptz NOT NULL DEFAULT now(),
+    created_at timestamptz NOT NULL DEFAULT clock_timestamp(),
+    updated_at timestamptz NOT NULL DEFAULT clock_timestamp(),
     updated_by uuid NOT NULL,
     CONSTRAINT library_items_updated_by_fkey FOREIGN KEY (workspace_id, updated_by) REFERENCES memberships (workspace_id, user_id)
   );

@@ -53,10 +53,11 @@ export async function seedDemo(
       userIds[account] = await unit.accounts.createUser({ email: demoEmail(account), name, passwordHash });
       await unit.accounts.addMember(workspaceId, userIds[account], account);
     }
-    for (const project of demo.projects) {
+    // Lists show what was changed last first: written backwards, they show the order of the data.
+    for (const project of demo.projects.toReversed()) {
       const { projects } = unit.workspace(workspaceId);
       const projectId = await projects.create({ name: project.name, description: project.description });
-      for (const scenario of project.scenarios) {
+      for (const scenario of project.scenarios.toReversed()) {
         await seedScenario({ unit, workspaceId, userIds, forecasts }, projectId, scenario);
       }
     }
