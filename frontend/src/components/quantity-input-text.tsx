@@ -106,7 +106,7 @@ export function ParsedInput<T>(props: ParsedInputProps<T>): ReactNode {
   const messageId = `${id}-message`;
   const isDescribed = input.message !== undefined || (hint !== undefined && !isCell);
   return (
-    <div className="min-w-0">
+    <div className="group/field min-w-0">
       <label htmlFor={id} className={isCell ? 'sr-only' : 'block text-small text-muted'}>
         {label}
       </label>
@@ -120,7 +120,7 @@ export function ParsedInput<T>(props: ParsedInputProps<T>): ReactNode {
         autoCapitalize="off"
         spellCheck={false}
         aria-invalid={input.message === undefined ? undefined : true}
-        title={isCell ? (input.message ?? input.text) : undefined}
+        title={input.message ?? (isCell ? input.text : undefined)}
         aria-describedby={isDescribed ? messageId : undefined}
         onChange={(event) => input.take(event.target.value)}
         onFocus={input.onFocus}
@@ -143,6 +143,13 @@ const CELL_INPUT =
   'h-9 w-full min-w-0 rounded-none border-b border-transparent bg-transparent px-1.5 text-ink ' +
   'hover:border-line focus-visible:outline-offset-[-2px] aria-invalid:border-rust aria-invalid:text-rust';
 
+// One line that moves nothing below it; the whole text lies over what follows while the field is being edited.
+const MESSAGE =
+  'min-w-0 truncate text-rust group-focus-within/field:absolute group-focus-within/field:top-1 ' +
+  'group-focus-within/field:left-0 group-focus-within/field:z-20 group-focus-within/field:w-max ' +
+  'group-focus-within/field:max-w-72 group-focus-within/field:bg-paper group-focus-within/field:pr-2 ' +
+  'group-focus-within/field:pb-1 group-focus-within/field:whitespace-normal';
+
 interface MessageProps {
   id: string;
   isCell: boolean;
@@ -161,9 +168,9 @@ function Message({ id, isCell, message, hint, children }: MessageProps) {
     );
   }
   return (
-    <div className="flex min-h-6 flex-wrap items-baseline gap-x-3 pt-1 text-small">
+    <div className="relative flex min-h-6 flex-wrap items-baseline gap-x-3 pt-1 text-small">
       {(message ?? hint) !== undefined && (
-        <p id={id} className={message === undefined ? 'text-muted' : 'text-rust'}>
+        <p id={id} className={message === undefined ? 'text-muted' : MESSAGE}>
           {message ?? hint}
         </p>
       )}

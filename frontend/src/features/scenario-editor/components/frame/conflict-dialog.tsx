@@ -24,8 +24,8 @@ export function ConflictDialog({ saving, theirs }: { saving: Saving; theirs: Sce
       onClose={saving.dismiss}
     >
       <p className="text-muted">
-        You began on revision {base.revision}; the other was saved {dateAndTime(theirs.updatedAt)}. Both stay in the
-        list of revisions, whatever you choose.
+        You began on revision {base.revision}; revision {theirs.revision} was saved {dateAndTime(theirs.updatedAt)}. It
+        stays in the list of revisions whatever you choose, and what you changed stays within reach of undo.
       </p>
       <div className="mt-5 grid gap-x-10 gap-y-6 md:grid-cols-2">
         <section aria-labelledby="their-changes" className="min-w-0">

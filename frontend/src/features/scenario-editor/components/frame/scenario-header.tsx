@@ -1,5 +1,5 @@
 import { useState } from 'react';
-import { Button, IconButton } from '#frontend/components/button.tsx';
+import { Button } from '#frontend/components/button.tsx';
 import { Dialog, DialogActions } from '#frontend/components/dialog.tsx';
 import { TextArea } from '#frontend/components/field.tsx';
 import { dateAndTime, dayOrTime } from '#frontend/lib/dates.ts';
@@ -78,26 +78,36 @@ function HistoryButtons() {
   const announcement = useEditorState((state) => state.announcement);
   return (
     <div role="group" aria-label="History" className="flex items-center max-sm:ml-auto sm:order-1">
-      <IconButton
-        label={undoLabel === undefined ? 'Undo' : `Undo: ${undoLabel}`}
-        aria-keyshortcuts="Control+Z"
-        disabled={undoLabel === undefined}
-        onClick={store.undo}
-      >
-        <CurvedArrow />
-      </IconButton>
-      <IconButton
-        label={redoLabel === undefined ? 'Redo' : `Redo: ${redoLabel}`}
-        aria-keyshortcuts="Control+Shift+Z Control+Y"
-        disabled={redoLabel === undefined}
-        onClick={store.redo}
-      >
-        <CurvedArrow isForward />
-      </IconButton>
+      <HistoryButton name="Undo" what={undoLabel} shortcuts="Control+Z" onClick={store.undo} />
+      <HistoryButton name="Redo" what={redoLabel} shortcuts="Control+Shift+Z Control+Y" onClick={store.redo} />
       <span role="status" className="sr-only">
         {announcement}
       </span>
     </div>
+  );
+}
+
+interface HistoryButtonProps {
+  name: 'Undo' | 'Redo';
+  /** The edit that it takes back or makes again; undefined when there is none. */
+  what: string | undefined;
+  shortcuts: string;
+  onClick: () => void;
+}
+
+function HistoryButton({ name, what, shortcuts, onClick }: HistoryButtonProps) {
+  return (
+    <button
+      type="button"
+      aria-label={name}
+      title={what === undefined ? name : `${name}: ${what}`}
+      aria-keyshortcuts={shortcuts}
+      disabled={what === undefined}
+      onClick={onClick}
+      className="inline-flex size-9 items-center justify-center rounded-full text-muted enabled:hover:bg-accent-soft enabled:hover:text-ink disabled:opacity-40"
+    >
+      <CurvedArrow isForward={name === 'Redo'} />
+    </button>
   );
 }
 
