@@ -160,6 +160,19 @@ describe('unsaved work', () => {
   });
 });
 
+describe('a tab that cannot be fetched', () => {
+  it('says so and leaves the scenario with its unsaved work on the page', async () => {
+    await type(page, `${RUNNING}, typical`, '3.3 mA');
+    await page.context().setOffline(true);
+    await openTab(page, 'Target');
+    await page.getByText('This page could not be fetched.').waitFor();
+    await page.getByText('Unsaved changes to revision 1').waitFor();
+    await openTab(page, 'Node');
+    expect(await field(page, `${RUNNING}, typical`).inputValue()).toBe('3.3 mA');
+    await page.context().setOffline(false);
+  });
+});
+
 describe('two people in one scenario', () => {
   /** Has somebody else save first; then tries to save here. Gives the dialog that shows both sides. */
   async function collide(): Promise<ReturnType<Page['getByRole']>> {

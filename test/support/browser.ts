@@ -94,7 +94,7 @@ export async function takePicture(page: Page, name: string, options: { fullPage?
 export async function axeViolations(page: Page): Promise<string[]> {
   await page.evaluate(axe.source);
   return page.evaluate(async () => {
-    const { violations } = await window.axe.run();
+    const { violations } = await window.axe.run({ resultTypes: ['violations'] });
     return violations.flatMap(({ id, nodes }) =>
       nodes.map(({ target, failureSummary }) => `${id}: ${target.join(' ')}: ${failureSummary ?? ''}`),
     );

@@ -1,3 +1,4 @@
+import type { ComponentType } from 'react';
 import { createBrowserRouter, Navigate, type RouteObject } from 'react-router-dom';
 import { Loading } from '#frontend/components/states.tsx';
 import { AppFrame } from './app-frame.tsx';
@@ -5,6 +6,22 @@ import { RouteError } from './route-error.tsx';
 import { SignedInOnly } from './signed-in-only.tsx';
 
 const errorElement = <RouteError />;
+
+/**
+ * The file of a page. One that cannot be fetched becomes a page that throws: the router leaves the place of a route empty
+ * whose `lazy` itself fails, and shows the error element only of what throws while it renders.
+ */
+function page(fetchPage: () => Promise<ComponentType>): () => Promise<{ Component: ComponentType }> {
+  return () =>
+    fetchPage().then(
+      (Component) => ({ Component }),
+      (error: unknown) => ({
+        Component: () => {
+          throw error;
+        },
+      }),
+    );
+}
 
 /** Every page is a file of its own, fetched when it is first opened. */
 export const ROUTES: RouteObject[] = [
@@ -20,12 +37,12 @@ export const ROUTES: RouteObject[] = [
       {
         path: 'sign-in',
         errorElement,
-        lazy: async () => ({ Component: (await import('./pages/sign-in-page.tsx')).SignInPage }),
+        lazy: page(async () => (await import('./pages/sign-in-page.tsx')).SignInPage),
       },
       {
         path: 'setup',
         errorElement,
-        lazy: async () => ({ Component: (await import('./pages/setup-page.tsx')).SetupPage }),
+        lazy: page(async () => (await import('./pages/setup-page.tsx')).SetupPage),
       },
       {
         element: <SignedInOnly />,
@@ -34,73 +51,74 @@ export const ROUTES: RouteObject[] = [
           {
             path: 'projects',
             errorElement,
-            lazy: async () => ({ Component: (await import('./pages/projects-page.tsx')).ProjectsPage }),
+            lazy: page(async () => (await import('./pages/projects-page.tsx')).ProjectsPage),
           },
           {
             path: 'projects/:projectId',
             errorElement,
-            lazy: async () => ({ Component: (await import('./pages/project-page.tsx')).ProjectPage }),
+            lazy: page(async () => (await import('./pages/project-page.tsx')).ProjectPage),
           },
           {
             path: 'scenarios/:scenarioId',
             errorElement,
-            lazy: async () => ({ Component: (await import('./pages/scenario-page.tsx')).ScenarioPage }),
+            lazy: page(async () => (await import('./pages/scenario-page.tsx')).ScenarioPage),
             children: [
               {
                 index: true,
-                lazy: async () => ({ Component: (await import('./pages/scenario-node-tab.tsx')).ScenarioNodeTab }),
+                errorElement,
+                lazy: page(async () => (await import('./pages/scenario-node-tab.tsx')).ScenarioNodeTab),
               },
               { path: 'node', element: <Navigate to=".." relative="path" replace /> },
               {
                 path: 'supply',
-                lazy: async () => ({ Component: (await import('./pages/scenario-supply-tab.tsx')).ScenarioSupplyTab }),
+                errorElement,
+                lazy: page(async () => (await import('./pages/scenario-supply-tab.tsx')).ScenarioSupplyTab),
               },
               {
                 path: 'climate',
-                lazy: async () => ({
-                  Component: (await import('./pages/scenario-climate-tab.tsx')).ScenarioClimateTab,
-                }),
+                errorElement,
+                lazy: page(async () => (await import('./pages/scenario-climate-tab.tsx')).ScenarioClimateTab),
               },
               {
                 path: 'target',
-                lazy: async () => ({ Component: (await import('./pages/scenario-target-tab.tsx')).ScenarioTargetTab }),
+                errorElement,
+                lazy: page(async () => (await import('./pages/scenario-target-tab.tsx')).ScenarioTargetTab),
               },
               {
                 path: 'revisions',
-                lazy: async () => ({
-                  Component: (await import('./pages/scenario-revisions-tab.tsx')).ScenarioRevisionsTab,
-                }),
+                errorElement,
+                lazy: page(async () => (await import('./pages/scenario-revisions-tab.tsx')).ScenarioRevisionsTab),
               },
             ],
           },
           {
             path: 'library',
             errorElement,
-            lazy: async () => ({ Component: (await import('./pages/library-page.tsx')).LibraryPage }),
+            lazy: page(async () => (await import('./pages/library-page.tsx')).LibraryPage),
             children: [
               { index: true, element: <Navigate to="parts" replace /> },
               {
                 path: ':tab',
-                lazy: async () => ({ Component: (await import('./pages/library-list-tab.tsx')).LibraryListTab }),
+                lazy: page(async () => (await import('./pages/library-list-tab.tsx')).LibraryListTab),
               },
             ],
           },
           {
             path: 'library/items/:itemId',
             errorElement,
-            lazy: async () => ({ Component: (await import('./pages/library-item-page.tsx')).LibraryItemPage }),
+            lazy: page(async () => (await import('./pages/library-item-page.tsx')).LibraryItemPage),
           },
           {
             path: 'account',
             errorElement,
-            lazy: async () => ({ Component: (await import('./pages/account-page.tsx')).AccountPage }),
+            lazy: page(async () => (await import('./pages/account-page.tsx')).AccountPage),
           },
         ],
       },
       {
         path: '*',
         errorElement,
-        lazy: async () => ({ Component: (await import('./pages/not-found-page.tsx')).NotFoundPage }),
+        lazy: page(async () => (await import('./pages/not-found-page.tsx')).NotFoundPage),
       },
     ],
   },
