@@ -24,7 +24,7 @@ export function benchScenario({ law, regulator, doublingK }: BenchChoice): Scena
       cutOffV: 1.9,
       cell: {
         designation: 'invented',
-        capacityC: { typical: 2_400 * 3.6 },
+        capacityC: { typical: 2_000 * 3.6 },
         openCircuitTableV: [
           [0, 3.3],
           [0.1, 3.1],

@@ -75,9 +75,9 @@ function factorAt(temperatureC: number, law: Partial<SelfDischargeRateInput>): n
 function averageFactor(row: TruthRow, activationEnergyJPerMol: number): number {
   const profile: unknown = row.inputs['profile'];
   if (!Array.isArray(profile)) throw new Error(`${row.id} has no profile.`);
-  return profile.reduce(
-    (sum: number, { temperature_C, share }: { temperature_C: number; share: number }) =>
-      sum + share * factorAt(temperature_C, { activationEnergyJPerMol }),
+  const shares: { temperature_C: number; share: number }[] = profile;
+  return shares.reduce(
+    (sum, { temperature_C, share }) => sum + share * factorAt(temperature_C, { activationEnergyJPerMol }),
     0,
   );
 }

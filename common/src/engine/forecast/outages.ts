@@ -1,19 +1,16 @@
 import { DEKADS, DEKAD_S } from '../climate/dekads.ts';
 import { winterOfLife } from '../climate/winters.ts';
-import { temperatureAtHour } from '../supply/day-average.ts';
 import { DAY_S, HOUR_S } from '#common/units/si.ts';
 import type { CompiledScenario } from './compile-scenario.ts';
-import type { DekadLoad, TestConditions } from './dekad-load.ts';
-import { firstFailure, worksAt } from './first-failure.ts';
+import { dayHours } from './day-hours.ts';
+import type { DayHours } from './day-hours.ts';
+import type { DekadLoad } from './dekad-load.ts';
+import { firstFailure } from './first-failure.ts';
 import type { Outage } from './forecast.types.ts';
-import { testConditions } from './make-dekad-load.ts';
 import type { Run } from './run.types.ts';
 import { HORIZON_S } from './run-mean-current.ts';
 import { walkOn } from './walk.ts';
 import type { Walk } from './walk.ts';
-
-/** The day as twelve pairs of hours of the same temperature, at their middles: 15.5 h and 14.5 h, and so on to 26.5 h and 3.5 h. */
-const PAIRS = 12;
 
 export interface AfterFailure {
   outages: Outage[];
@@ -34,7 +31,7 @@ export interface AfterFailure {
 export function afterFailure(compiled: CompiledScenario, run: Run, latestS: number): AfterFailure {
   const lastS = Math.min(latestS, HORIZON_S);
   const state: Walk = { spent: run.spent, timeS: run.endS, spentS: 0, perVoltS: 0, voltS: 0 };
-  const hoursOf = hourConditions(compiled);
+  const hours = dayHours(compiled);
   const silences: Silence[] = [];
   let lastReportS = run.endS;
   // A whole year without a report: later ones have less charge, so none follows.
@@ -42,7 +39,7 @@ export function afterFailure(compiled: CompiledScenario, run: Run, latestS: numb
     if (state.timeS - lastReportS > DEKADS * DEKAD_S) break;
     const load = compiled.dekadLoad((compiled.startDekad + dekad) % DEKADS);
     const endS = Math.min((dekad + 1) * DEKAD_S, lastS);
-    const passed = passDekad(compiled, { load, startingC: run.startingC, endS, hoursOf }, state);
+    const passed = passDekad(compiled, { load, startingC: run.startingC, endS, hours }, state);
     lastReportS = Math.max(lastReportS, passed.lastReportS);
     if (passed.silence) silences.push({ ...passed.silence, winter: winterOf(compiled, dekad) });
   }
@@ -60,35 +57,17 @@ interface Silence {
 const winterOf = ({ startDekad, winterStart }: CompiledScenario, dekad: number): number =>
   winterOfLife(startDekad, dekad, winterStart);
 
-/** Conditions of the twelve pairs of hours of a dekad, made when first asked for. */
-function hourConditions(compiled: CompiledScenario): (load: DekadLoad) => TestConditions[] {
-  const known: TestConditions[][] = [];
-  return (load) => {
-    const { dekadOfYear, meanC, amplitudeK, coldestC } = load.dekad;
-    const found = known[dekadOfYear];
-    if (found) return found;
-    const made = Array.from({ length: PAIRS }, (_, pair) => {
-      const hourC = temperatureAtHour(meanC, amplitudeK, 15.5 + pair);
-      // A coldest night deepens the cold half of the day.
-      const nightC = temperatureAtHour(meanC, meanC - coldestC, 15.5 + pair);
-      return testConditions(compiled, load.lists, hourC < meanC ? nightC : hourC);
-    });
-    known[dekadOfYear] = made;
-    return made;
-  };
-}
-
 interface Passage {
   load: DekadLoad;
   startingC: number;
   endS: number;
-  hoursOf: (load: DekadLoad) => TestConditions[];
+  hours: DayHours;
 }
 
 /** Goes on to the end of a dekad, with its silence from the moment in which its coldest hour fails. */
 function passDekad(
   compiled: CompiledScenario,
-  { load, startingC, endS, hoursOf }: Passage,
+  { load, startingC, endS, hours }: Passage,
   state: Walk,
 ): { silence: Omit<Silence, 'winter'> | null; lastReportS: number } {
   const { source, converter } = compiled;
@@ -104,25 +83,13 @@ function passDekad(
     return until.timeS;
   };
   const startS = timeAt(cold.spent);
-  const hours = hoursOf(load);
-  // Until the coldest hour fails all hours work; where it fails from the beginning nothing is known yet.
-  const coldReportS = startS > start.timeS ? startS : 0;
-  const { sight } = converter;
   const middle = (cold.spent + range.toSpent) / 2;
-  const silent = hours.filter((conditions) => !worksAt(source, conditions, sight, middle)).length;
-  const silence = { startS, endS, share: silent / PAIRS };
-  // Mostly the warmest hour works to the end of the dekad, or no hour works from its beginning.
-  const [warmest] = hours;
-  if (warmest && worksAt(source, warmest, sight, range.toSpent)) return { silence, lastReportS: endS };
-  if (hours.every((conditions) => !worksAt(source, conditions, sight, range.fromSpent))) {
-    return { silence, lastReportS: coldReportS };
-  }
-  const reports = hours.map((conditions) => {
-    const failure = firstFailure(source, conditions, sight, range);
-    if (failure === null) return endS;
-    return failure.spent > range.fromSpent ? timeAt(failure.spent) : 0;
-  });
-  return { silence, lastReportS: Math.max(coldReportS, ...reports) };
+  const silence = { startS, endS, share: hours.silentShare(load, middle) };
+  // Until the coldest hour fails all hours work; where it fails from the beginning only the others can tell.
+  const coldReportS = startS > start.timeS ? startS : 0;
+  const until = hours.worksUntil(load, range);
+  if (until === null) return { silence, lastReportS: coldReportS };
+  return { silence, lastReportS: until === Infinity ? endS : Math.max(coldReportS, timeAt(until)) };
 }
 
 /** Joins silences that follow each other within a winter, up to the last report. */
