@@ -161,14 +161,18 @@ describe('a save that comes too late', () => {
 
 describe('unsaved work of an earlier visit', () => {
   const keep = (baseVersion: number): boolean =>
-    writeDraft(localStorage, ID, {
-      baseVersion,
-      baseRevision: baseVersion - 1,
-      baseDocument: editorScenario(),
-      document: { ...editorScenario(), name: 'Half done' },
-      pending: {},
-      writtenAt: '2026-11-30T09:00:00.000Z',
-    });
+    writeDraft(
+      localStorage,
+      { userId: uuid(1), scenarioId: ID },
+      {
+        baseVersion,
+        baseRevision: baseVersion - 1,
+        baseDocument: editorScenario(),
+        document: { ...editorScenario(), name: 'Half done' },
+        pending: {},
+        writtenAt: '2026-11-30T09:00:00.000Z',
+      },
+    );
 
   test('is back on the page and can be discarded, which undo takes back', async () => {
     keep(4);
@@ -194,9 +198,9 @@ describe('unsaved work of an earlier visit', () => {
   test('is kept while one types and gone once it is saved', async () => {
     openPage([{ body: detail({ version: 5, revision: 4 }) }]);
     await rename('New');
-    await waitFor(() => expect(localStorage.getItem(`overwinter.draft.${ID}`)).toContain('New'), { timeout: 5_000 });
+    await waitFor(() => expect(localStorage.getItem(`overwinter.draft.${uuid(1)}.${ID}`)).toContain('New'), { timeout: 5_000 });
     key('s');
-    await waitFor(() => expect(localStorage.getItem(`overwinter.draft.${ID}`)).toBeNull(), { timeout: 5_000 });
+    await waitFor(() => expect(localStorage.getItem(`overwinter.draft.${uuid(1)}.${ID}`)).toBeNull(), { timeout: 5_000 });
   });
 });
 

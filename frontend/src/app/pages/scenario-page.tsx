@@ -42,7 +42,7 @@ export function ScenarioPage() {
   const scenario = useScenario(scenarioId);
   const session = useSession();
   if (scenario.data && session) {
-    return <OpenScenario key={scenarioId} detail={scenario.data} canEdit={session.canEdit} />;
+    return <OpenScenario key={scenarioId} detail={scenario.data} editorId={session.canEdit ? session.user.id : null} />;
   }
   if (scenario.error instanceof ApiError && [400, 404].includes(scenario.error.status)) return <NotFoundPage />;
   return (
@@ -59,27 +59,39 @@ export function ScenarioPage() {
   );
 }
 
-function OpenScenario({ detail, canEdit }: { detail: ScenarioDetail; canEdit: boolean }) {
+/** @param editorId who may change it; null: for reading only */
+function OpenScenario({ detail, editorId }: { detail: ScenarioDetail; editorId: string | null }) {
   // Opened once: what comes from the server later is told by saving, never put in the place of what is being typed.
-  const [{ store, kept }] = useState(() => openScenario(detail, canEdit ? readDraft(localStorage, detail.id) : null));
+  const [{ store, kept }] = useState(() =>
+    openScenario(
+      detail,
+      editorId === null ? null : readDraft(localStorage, { userId: editorId, scenarioId: detail.id }),
+    ),
+  );
   return (
-    <EditorProvider store={store} isReadOnly={!canEdit}>
-      <ScenarioFrame scenarioId={detail.id} project={{ id: detail.projectId, name: detail.projectName }} kept={kept} />
+    <EditorProvider store={store} isReadOnly={editorId === null}>
+      <ScenarioFrame
+        editorId={editorId}
+        scenarioId={detail.id}
+        project={{ id: detail.projectId, name: detail.projectName }}
+        kept={kept}
+      />
     </EditorProvider>
   );
 }
 
 interface ScenarioFrameProps {
+  editorId: string | null;
   scenarioId: string;
   project: { id: string; name: string };
   kept: KeptWork | null;
 }
 
-function ScenarioFrame({ scenarioId, project, kept: keptAtFirst }: ScenarioFrameProps) {
+function ScenarioFrame({ editorId, scenarioId, project, kept: keptAtFirst }: ScenarioFrameProps) {
   const store = useEditorStore();
   const isReadOnly = useIsReadOnly();
   const saving = useSave(store, scenarioId);
-  const isKept = useDraftKeeping(store, scenarioId, !isReadOnly);
+  const isKept = useDraftKeeping(store, editorId, scenarioId);
   const [kept, setKept] = useState(keptAtFirst);
   const base = `/scenarios/${scenarioId}`;
   const navigate = useNavigate();

@@ -12,6 +12,9 @@ function fakeStorage(): Pick<Storage, 'getItem' | 'setItem' | 'removeItem'> & { 
   };
 }
 
+const KEY_A = { userId: 'u', scenarioId: 'a' };
+const KEY_B = { userId: 'u', scenarioId: 'b' };
+
 const draft: Draft = {
   baseVersion: 4,
   baseRevision: 3,
@@ -24,19 +27,25 @@ const draft: Draft = {
 describe('readDraft', () => {
   test('gives what writeDraft kept', () => {
     const storage = fakeStorage();
-    expect(writeDraft(storage, 'a', draft)).toBe(true);
-    expect(readDraft(storage, 'a')).toEqual(draft);
-    expect(readDraft(storage, 'b')).toBeNull();
-    removeDraft(storage, 'a');
-    expect(readDraft(storage, 'a')).toBeNull();
+    expect(writeDraft(storage, KEY_A, draft)).toBe(true);
+    expect(readDraft(storage, KEY_A)).toEqual(draft);
+    expect(readDraft(storage, KEY_B)).toBeNull();
+    removeDraft(storage, KEY_A);
+    expect(readDraft(storage, KEY_A)).toBeNull();
+  });
+
+  test('gives nobody the work of somebody else', () => {
+    const storage = fakeStorage();
+    writeDraft(storage, KEY_A, draft);
+    expect(readDraft(storage, { ...KEY_A, userId: 'v' })).toBeNull();
   });
 
   test('gives nothing when what lies there is no draft', () => {
     const storage = fakeStorage();
-    storage.texts.set('overwinter.draft.a', '{"document":');
-    expect(readDraft(storage, 'a')).toBeNull();
-    storage.texts.set('overwinter.draft.a', JSON.stringify({ ...draft, document: { name: 'x' } }));
-    expect(readDraft(storage, 'a')).toBeNull();
+    storage.texts.set('overwinter.draft.u.a', '{"document":');
+    expect(readDraft(storage, KEY_A)).toBeNull();
+    storage.texts.set('overwinter.draft.u.a', JSON.stringify({ ...draft, document: { name: 'x' } }));
+    expect(readDraft(storage, KEY_A)).toBeNull();
   });
 });
 
@@ -48,6 +57,6 @@ describe('writeDraft', () => {
         throw new DOMException('full', 'QuotaExceededError');
       },
     };
-    expect(writeDraft(full, 'a', draft)).toBe(false);
+    expect(writeDraft(full, KEY_A, draft)).toBe(false);
   });
 });

@@ -26,12 +26,18 @@ const draftSchema = z.strictObject({
 
 type DraftStorage = Pick<Storage, 'getItem' | 'setItem' | 'removeItem'>;
 
-const keyOf = (scenarioId: string): string => `overwinter.draft.${scenarioId}`;
+/** Whose work on what: two people who use one browser never see each other's. */
+export interface DraftKey {
+  userId: string;
+  scenarioId: string;
+}
+
+const keyOf = ({ userId, scenarioId }: DraftKey): string => `overwinter.draft.${userId}.${scenarioId}`;
 
 /** The kept work, or null where there is none or it cannot be read. */
-export function readDraft(storage: DraftStorage, scenarioId: string): Draft | null {
+export function readDraft(storage: DraftStorage, key: DraftKey): Draft | null {
   try {
-    const text = storage.getItem(keyOf(scenarioId));
+    const text = storage.getItem(keyOf(key));
     if (text === null) return null;
     const parsed = draftSchema.safeParse(JSON.parse(text));
     return parsed.success ? parsed.data : null;
@@ -42,18 +48,18 @@ export function readDraft(storage: DraftStorage, scenarioId: string): Draft | nu
 }
 
 /** Keeps the work; false where the browser has no room or no storage. */
-export function writeDraft(storage: DraftStorage, scenarioId: string, draft: Draft): boolean {
+export function writeDraft(storage: DraftStorage, key: DraftKey, draft: Draft): boolean {
   try {
-    storage.setItem(keyOf(scenarioId), JSON.stringify(draft));
+    storage.setItem(keyOf(key), JSON.stringify(draft));
     return true;
   } catch {
     return false;
   }
 }
 
-export function removeDraft(storage: DraftStorage, scenarioId: string): void {
+export function removeDraft(storage: DraftStorage, key: DraftKey): void {
   try {
-    storage.removeItem(keyOf(scenarioId));
+    storage.removeItem(keyOf(key));
   } catch {
     // Without storage there is no draft to remove.
   }
