@@ -12,7 +12,7 @@ const CODE_GROUPS = [
   { name: 'router', test: /node_modules[\\/](react-router|react-router-dom|@tanstack)[\\/]/ },
   { name: 'forms', test: /node_modules[\\/](zod|@hookform|react-hook-form|@standard-schema)[\\/]/ },
   { name: 'decimal', test: /node_modules[\\/]decimal\.js[\\/]/ },
-  { name: 'charts', test: /node_modules[\\/](chart\.js|react-chartjs-2|@kurkle)[\\/]/ },
+  { name: 'charts', test: /node_modules[\\/](chart\.js|@kurkle)[\\/]/ },
 ];
 
 export default defineConfig({

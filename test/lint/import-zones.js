@@ -22,7 +22,6 @@ const FRONTEND_PACKAGES = only(
   'react-dom',
   'react-router-dom',
   'react-hook-form',
-  'react-chartjs-2',
   'chart\\.js',
   '@tanstack/.*',
   '@hookform/.*',
