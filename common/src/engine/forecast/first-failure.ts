@@ -34,19 +34,15 @@ export function firstFailure(
   const fromDepth = fromSpent / capacityFactor;
   if (fromDepth >= 1) return { spent: fromSpent, testCase: null };
   const toDepth = Math.min(1, toSpent / capacityFactor);
-  const low = { openCircuitV: 0, resistanceFactor: 0 };
-  const high = { openCircuitV: 0, resistanceFactor: 0 };
+  const { low, high, piece } = source.room;
   sourceAt(source, fromDepth, low);
   let depth = fromDepth;
   for (let stretch = stretchOf(source, fromDepth); ; stretch++) {
     const endDepth = Math.min(source.depths[stretch + 1] ?? 1, toDepth);
     sourceAt(source, endDepth, high);
-    const first = firstOf(conditions.cases, sight, {
-      openCircuitFromV: low.openCircuitV + openCircuitShiftV,
-      openCircuitToV: high.openCircuitV + openCircuitShiftV,
-      resistanceFromOhm: low.resistanceFactor,
-      resistanceToOhm: high.resistanceFactor,
-    });
+    piece.openCircuitFromV = low.openCircuitV + openCircuitShiftV;
+    piece.openCircuitToV = high.openCircuitV + openCircuitShiftV;
+    const first = firstOf(conditions.cases, sight, source.room);
     if (first) {
       const failingDepth = depth + first.share * (endDepth - depth);
       const spent = first.share === 0 && depth === fromDepth ? fromSpent : failingDepth * capacityFactor;
@@ -77,7 +73,7 @@ export function worksAt(
   spent: number,
 ): boolean {
   if (spent >= capacityFactor) return false;
-  const point = sourceAt(source, spent / capacityFactor, { openCircuitV: 0, resistanceFactor: 0 });
+  const point = sourceAt(source, spent / capacityFactor, source.room.low);
   const openCircuitV = point.openCircuitV + openCircuitShiftV;
   for (const { load, limitV, ohm } of cases) {
     if (!(loadedVoltageV(load, sight, openCircuitV, ohm * point.resistanceFactor) >= limitV)) return false;
@@ -85,26 +81,23 @@ export function worksAt(
   return true;
 }
 
-/** The case that fails first along a stretch; resistances of the stretch are factors yet. */
+/** The case that fails first between the two points of a room, whose piece has the voltages already. */
 function firstOf(
   cases: readonly TestCase[],
   sight: LoadSight,
-  stretch: {
-    openCircuitFromV: number;
-    openCircuitToV: number;
-    resistanceFromOhm: number;
-    resistanceToOhm: number;
-  },
+  { low, high, piece }: SourceTables['room'],
 ): { share: number; testCase: TestCase } | null {
-  const piece = { ...stretch };
-  let first: { share: number; testCase: TestCase } | null = null;
+  let firstShare = Infinity;
+  let first: TestCase | null = null;
   for (const testCase of cases) {
-    piece.resistanceFromOhm = stretch.resistanceFromOhm * testCase.ohm;
-    piece.resistanceToOhm = stretch.resistanceToOhm * testCase.ohm;
+    piece.resistanceFromOhm = low.resistanceFactor * testCase.ohm;
+    piece.resistanceToOhm = high.resistanceFactor * testCase.ohm;
     const share = firstFailingShare(testCase, sight, piece);
-    if (share !== null && (first === null || share < first.share)) first = { share, testCase };
+    if (share === null || share >= firstShare) continue;
+    firstShare = share;
+    first = testCase;
   }
-  return first;
+  return first && { share: firstShare, testCase: first };
 }
 
 /** The moment with the least headroom. */
@@ -133,7 +126,7 @@ export function leastHeadroom(
   view: { sight: LoadSight; highestRailV: number },
   spent: number,
 ): LeastHeadroom | null {
-  const point = sourceAt(source, spent / capacityFactor, { openCircuitV: 0, resistanceFactor: 0 });
+  const point = sourceAt(source, spent / capacityFactor, source.room.low);
   const openCircuitV = point.openCircuitV + openCircuitShiftV;
   let least: TestCase | null = null;
   let leastV = Infinity;
@@ -148,25 +141,8 @@ export function leastHeadroom(
     loadedV = Number.isNaN(voltageV) ? 0 : voltageV;
   }
   if (least === null) return null;
-  return { testCase: least, loadedV, ...limitOf(least, loadedV, view.highestRailV) };
-}
-
-/**
- * Limit and headroom of a case at a loaded voltage, always finite.
- *
- * @param testCase The case.
- * @param loadedV Loaded voltage, V.
- * @param highestRailV Highest voltage that the rail can have, V.
- * @returns Limit and headroom, V.
- * @example limitOf(testCase, 2.4, Infinity).headroomV
- */
-export function limitOf(
-  testCase: TestCase,
-  loadedV: number,
-  highestRailV: number,
-): { limitV: number; headroomV: number } {
-  const { limitV, candidate } = testCase;
-  if (limitV < Infinity) return { limitV, headroomV: loadedV - limitV };
-  const headroomV = highestRailV - candidate.limit.railV;
-  return { limitV: loadedV - headroomV, headroomV };
+  if (least.limitV < Infinity)
+    return { testCase: least, loadedV, limitV: least.limitV, headroomV: loadedV - least.limitV };
+  const headroomV = view.highestRailV - least.candidate.limit.railV;
+  return { testCase: least, loadedV, limitV: loadedV - headroomV, headroomV };
 }

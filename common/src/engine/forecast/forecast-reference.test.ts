@@ -4,7 +4,7 @@ import { forecast } from '#common/engine/index.ts';
 import { referenceLife } from '#test/support/ode-reference.ts';
 import { variedScenario } from '#test/support/varied-scenario.ts';
 
-const COUNT = process.env['LONG'] === '1' ? 600 : 80;
+const COUNT = process.env['LONG'] === '1' ? 600 : 60;
 /** Relative agreement of lives that the mean-current level promises. */
 const AGREEMENT = 1e-4;
 

@@ -4,6 +4,7 @@ import type { CellLoad } from '../supply/cell-load.ts';
 import type { Candidate } from './candidates.ts';
 import type { CompiledScenario } from './compile-scenario.ts';
 import { cellLoad } from './converter.ts';
+import type { Converter } from './converter.ts';
 import type { DekadLoad, MeanLoad, TestCase, TestConditions } from './dekad-load.ts';
 import { groupFactors, weighGroups } from './load-vector.ts';
 import { meanPieces } from './mean-pieces.ts';
@@ -119,11 +120,16 @@ export function testCases(
   const resistanceFactor = resistanceTemperatureFactor(resistanceFactorByTemperature, temperatureC);
   const isFixed = loads.groups.length === 1;
   const factors = groupFactors(loads.groups, temperatureC, 0);
-  const loadOf = ({ vector }: Candidate): CellLoad => cellLoad(converter, weighGroups(vector, 0, factors));
   return candidates.map((candidate) => ({
-    load: isFixed ? (candidate.fixedLoad ??= loadOf(candidate)) : loadOf(candidate),
+    load: isFixed
+      ? (candidate.fixedLoad ??= loadAt(converter, candidate, factors))
+      : loadAt(converter, candidate, factors),
     limitV: candidate.limitV,
     ohm: candidate.freshOhm * resistanceFactor,
     candidate,
   }));
+}
+
+function loadAt(converter: Converter, { vector }: Candidate, factors: readonly number[]): CellLoad {
+  return cellLoad(converter, weighGroups(vector, 0, factors));
 }

@@ -25,7 +25,7 @@ export interface OnceEvent {
  * @example meanOpenCircuitV(compiled, load, 0)
  */
 export function meanOpenCircuitV({ source }: CompiledScenario, load: DekadLoad, spent: number): number {
-  const point = sourceAt(source, spent / load.capacityFactor, { openCircuitV: 0, resistanceFactor: 0 });
+  const point = sourceAt(source, spent / load.capacityFactor, source.room.low);
   return point.openCircuitV + load.openCircuitShiftV;
 }
 

@@ -77,19 +77,26 @@ function passDekad(
   const range = { fromSpent: start.spent, toSpent: Math.max(start.spent, state.spent) };
   const cold = firstFailure(source, load.cold, converter.sight, range);
   if (!cold) return { silence: null, lastReportS: endS };
-  const timeAt = (spent: number): number => {
-    const until = { ...start };
-    walkOn(load.mean, startingC, { timeS: endS - start.timeS, spent }, until);
-    return until.timeS;
-  };
-  const startS = timeAt(cold.spent);
+  const passage = { load, startingC, leftS: endS - start.timeS };
+  const startS = timeAtS(passage, start, cold.spent);
   const middle = (cold.spent + range.toSpent) / 2;
   const silence = { startS, endS, share: hours.silentShare(load, middle) };
   // Until the coldest hour fails all hours work; where it fails from the beginning only the others can tell.
   const coldReportS = startS > start.timeS ? startS : 0;
   const until = hours.worksUntil(load, range);
   if (until === null) return { silence, lastReportS: coldReportS };
-  return { silence, lastReportS: until === Infinity ? endS : Math.max(coldReportS, timeAt(until)) };
+  return { silence, lastReportS: until === Infinity ? endS : Math.max(coldReportS, timeAtS(passage, start, until)) };
+}
+
+/** Time at which a charge is spent, on the way on from a state. */
+function timeAtS(
+  { load, startingC, leftS }: { load: DekadLoad; startingC: number; leftS: number },
+  start: Walk,
+  spent: number,
+): number {
+  const until = { ...start };
+  walkOn(load.mean, startingC, { timeS: leftS, spent }, until);
+  return until.timeS;
 }
 
 /** Joins silences that follow each other within a winter, up to the last report. */

@@ -52,8 +52,10 @@ type CurrentOf = (loads: readonly IntervalLoad[]) => number;
 /** The interval with the highest current of each routine. */
 function heaviestByRoutine(loads: readonly IntervalLoad[], currents: CurrentOf): IntervalLoad[] {
   const heaviest = new Map<number, { load: IntervalLoad; currentA: number }>();
+  const one: IntervalLoad[] = [];
   for (const load of loads) {
-    const currentA = currents([load]);
+    one[0] = load;
+    const currentA = currents(one);
     if (currentA > (heaviest.get(load.routineIndex)?.currentA ?? -Infinity)) {
       heaviest.set(load.routineIndex, { load, currentA });
     }

@@ -1,4 +1,5 @@
 import type { Cell } from '../scenario/scenario.types.ts';
+import type { SourcePiece } from '../supply/first-failing-share.ts';
 import type { PackFactors } from '../supply/pack-of.ts';
 import { tableValue } from '../supply/table-value.ts';
 import { mergedDepths } from '../supply/usable-charge.ts';
@@ -8,6 +9,8 @@ export interface SourceTables {
   depths: Float64Array;
   openCircuitV: Float64Array;
   resistanceFactors: Float64Array;
+  /** Room for the tests of one stretch, which are made tens of thousands of times in a forecast. */
+  room: { low: SourcePoint; high: SourcePoint; piece: SourcePiece };
 }
 
 /** The source at one depth. */
@@ -34,6 +37,11 @@ export function sourceTables(
     depths: Float64Array.from(depths),
     openCircuitV: Float64Array.from(depths, (depth) => openCircuitFactor * tableValue(openCircuitTableV, depth)),
     resistanceFactors: Float64Array.from(depths, (depth) => tableValue(resistanceFactorByDepth, depth)),
+    room: {
+      low: { openCircuitV: 0, resistanceFactor: 0 },
+      high: { openCircuitV: 0, resistanceFactor: 0 },
+      piece: { openCircuitFromV: 0, openCircuitToV: 0, resistanceFromOhm: 0, resistanceToOhm: 0 },
+    },
   };
 }
 
