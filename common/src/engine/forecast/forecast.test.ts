@@ -369,3 +369,14 @@ test('forecast: counts the winters whose last dekad has passed', () => {
   // Life of 3.17 years from March: winters of December to February end after 1, 2 and 3 years.
   expect(fast(simpleScenario({ climate: { months, startMonth: 3 } })).wintersSurvived).toBe(3);
 });
+
+test('forecast: stays finite where a document asks for a rate beyond all sense', () => {
+  const { outcome, dekads } = fast(
+    simpleScenario({
+      cell: { selfDischarge: { lossPerYear: { typical: 0.5 }, referenceC: 20, q10: 1e300 } },
+      climate: { months: flatMonths(-50, 100) },
+    }),
+  );
+  expect(outcome).toBe('charge-exhausted');
+  expect(dekads.every(({ selfDischargeA, remainingC }) => Number.isFinite(selfDischargeA + remainingC))).toBe(true);
+});

@@ -3,6 +3,9 @@ import { besselI0 } from './bessel-i0.ts';
 /** Hour of the day that is warmest. */
 const WARMEST_HOUR = 15;
 
+/** Largest argument of I0 taken from its series. */
+const LARGEST_SERIES = 600;
+
 /** Points of the midpoint rule over a day. */
 const POINTS = 24;
 
@@ -35,8 +38,12 @@ export function dayAverageOfPower(
   stepK: number,
   { aboveReferenceK, amplitudeK }: { aboveReferenceK: number; amplitudeK: number },
 ): number {
-  const atMean = base ** (aboveReferenceK / stepK);
-  return amplitudeK === 0 ? atMean : atMean * besselI0((amplitudeK * Math.log(base)) / stepK);
+  const exponent = (aboveReferenceK * Math.log(base)) / stepK;
+  if (amplitudeK === 0) return base ** (aboveReferenceK / stepK);
+  const swing = Math.abs((amplitudeK * Math.log(base)) / stepK);
+  // Beyond, I0 exceeds a double although the product may not: its asymptotic form goes into the exponent.
+  if (swing > LARGEST_SERIES) return Math.exp(exponent + swing - Math.log(2 * Math.PI * swing) / 2);
+  return Math.exp(exponent) * besselI0(swing);
 }
 
 /**
