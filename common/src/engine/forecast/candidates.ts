@@ -3,6 +3,7 @@ import type { CellLoad } from '../supply/cell-load.ts';
 import type { Cell } from '../scenario/scenario.types.ts';
 import { cellLimitV } from './converter.ts';
 import type { Converter } from './converter.ts';
+import { railLimit } from './node-loads.ts';
 import type { IntervalLoad, NodeLoads, RailLimit } from './node-loads.ts';
 
 /** A moment that may be the critical one: an interval, or rest, with `always` routines added. */
@@ -10,6 +11,9 @@ export interface Candidate {
   /** Whole load, rest and leakages included. */
   vector: Float64Array;
   limit: RailLimit;
+  /** Limit of the parts in use alone, and which parts are away from a rest state with a limit. */
+  busy: RailLimit;
+  awayMask: number;
   /** The limit at the cell, V; Infinity when the rail never reaches it. */
   limitV: number;
   /** Of the fresh pack at 20 °C for a load of this length, Ω. */
@@ -52,8 +56,9 @@ export function candidateLists(
   isOn: (routineIndex: number) => boolean,
   isAlways: (routineIndex: number) => boolean,
 ): CandidateLists {
-  const { intervals, rest, restLimit } = context.loads;
-  const atRest = { vector: rest, limit: restLimit, source: null, ...electrics(context, restLimit, Infinity) };
+  const { intervals, rest } = context.loads;
+  const busy = { railV: 0, partIndex: -1 };
+  const atRest = { vector: rest, busy, awayMask: 0, source: null, ...electrics(context, busy, 0, Infinity) };
   let grounds: Candidate[] = [atRest];
   const always = new Map<number, IntervalLoad[]>();
   const others: IntervalLoad[] = [];
@@ -63,9 +68,9 @@ export function candidateLists(
     else always.set(load.routineIndex, [...(always.get(load.routineIndex) ?? []), load]);
   }
   // Each moment lies in one interval of each `always` routine: combine them.
-  for (const loads of always.values()) grounds = uncovered(context, grounds, loads);
-  const all = uncovered(context, grounds, others);
-  for (const ground of grounds) keep(all, ground);
+  for (const loads of always.values()) grounds = uncovered(context, grounds, loads, coversUnder);
+  const all = uncovered(context, grounds, others, covers);
+  for (const ground of grounds) keep(all, ground, covers);
   return { all, rest: grounds };
 }
 
@@ -84,23 +89,28 @@ export function routineCandidates(
   routineIndex: number,
 ): Candidate[] {
   const own = context.loads.intervals.filter((load) => load.routineIndex === routineIndex);
-  return uncovered(context, grounds, own);
+  return uncovered(context, grounds, own, covers);
 }
 
 function electrics(
-  { converter, resistanceOhm, resistanceFactor }: CandidateContext,
-  limit: RailLimit,
+  { converter, resistanceOhm, resistanceFactor, loads }: CandidateContext,
+  busy: RailLimit,
+  awayMask: number,
   durationS: number,
-): Pick<Candidate, 'limitV' | 'freshOhm'> {
+): Pick<Candidate, 'limit' | 'limitV' | 'freshOhm'> {
+  const limit = railLimit(loads.restLimitsV, busy, awayMask);
   const freshOhm = freshResistanceOhm(resistanceOhm, durationS) * resistanceFactor;
-  return { limitV: cellLimitV(converter, limit.railV), freshOhm };
+  return { limit, limitV: cellLimitV(converter, limit.railV), freshOhm };
 }
+
+type Covers = (strong: Candidate, weak: Candidate) => boolean;
 
 /** Intervals on top of grounds, told as the intervals themselves, without those that another one covers. */
 function uncovered(
   context: CandidateContext,
   grounds: readonly Candidate[],
   loads: readonly IntervalLoad[],
+  isCovered: Covers,
 ): Candidate[] {
   const { width, intervalExcess } = context.loads;
   const kept: Candidate[] = [];
@@ -110,24 +120,28 @@ function uncovered(
       for (let at = 0; at < width; at++) {
         vector[at] = (ground.vector[at] ?? 0) + (intervalExcess[load.offset + at] ?? 0);
       }
-      // A limit of plain rest is already in the interval's own, less the parts that it occupies.
-      const isStronger = ground.source !== null && ground.limit.railV > load.limit.railV;
-      const limit = isStronger ? ground.limit : load.limit;
-      const next = { vector, limit, source: load, ...electrics(context, limit, load.interval.durationS) };
-      if (keep(kept, next)) vector = new Float64Array(width);
+      const busy = ground.busy.railV > load.busy.railV ? ground.busy : load.busy;
+      const awayMask = ground.awayMask | load.awayMask;
+      const figures = electrics(context, busy, awayMask, load.interval.durationS);
+      if (keep(kept, { vector, busy, awayMask, source: load, ...figures }, isCovered)) vector = new Float64Array(width);
     }
   }
   return kept;
 }
 
 /** Adds a candidate unless one that is there covers it, and drops those that it covers; the order of the others is kept. */
-function keep(kept: Candidate[], next: Candidate): boolean {
-  for (const strong of kept) if (covers(strong, next)) return false;
+function keep(kept: Candidate[], next: Candidate, isCovered: Covers): boolean {
+  for (const strong of kept) if (isCovered(strong, next)) return false;
   let at = 0;
-  for (const weak of kept) if (!covers(next, weak)) kept[at++] = weak;
+  for (const weak of kept) if (!isCovered(next, weak)) kept[at++] = weak;
   kept.length = at;
   kept.push(next);
   return true;
+}
+
+/** Covers it under any interval on top too, which may take parts out of rest states with a limit. */
+function coversUnder(strong: Candidate, weak: Candidate): boolean {
+  return strong.busy.railV >= weak.busy.railV && (strong.awayMask & ~weak.awayMask) === 0 && covers(strong, weak);
 }
 
 function covers(strong: Candidate, weak: Candidate): boolean {

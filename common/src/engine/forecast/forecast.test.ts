@@ -380,3 +380,32 @@ test('forecast: stays finite where a document asks for a rate beyond all sense',
   expect(outcome).toBe('charge-exhausted');
   expect(dekads.every(({ selfDischargeA, remainingC }) => Number.isFinite(selfDischargeA + remainingC))).toBe(true);
 });
+
+test('forecast: beside a routine that runs always, a part in use is not held to the limit of its rest state', () => {
+  const scenario = simpleScenario({ node: pulsingNode(600, 0.001, 2.1) });
+  const [radio] = scenario.node.parts;
+  if (!radio) throw new Error('The node has a radio.');
+  // The radio's memory needs 2.5 V at rest; the clock ticks always, and the radio sends always beside it.
+  radio.states = radio.states.map((state) =>
+    state.id === 'off' ? { ...state, lowestVoltageV: { typical: 2.5 } } : state,
+  );
+  const clock = {
+    ...radio,
+    id: 'clock',
+    name: 'Clock',
+    states: radio.states.map(({ id, name, current }) => ({ id, name, current })),
+  };
+  scenario.node.parts.push(clock);
+  const step = (states: Record<string, string>): Scenario['node']['routines'][number]['steps'] => [
+    { id: 'run', name: 'Run', states, duration: { kind: 'fixed', typical: 0.01 } },
+  ];
+  const always = { enabled: true, schedule: { kind: 'always' } } as const;
+  scenario.node.routines = [
+    { id: 'tick', name: 'Tick', ...always, steps: step({ clock: 'send' }) },
+    { id: 'send', name: 'Send', ...always, steps: step({ radio: 'send' }) },
+  ];
+  const { limitedBy, chargeLeftFraction } = fast(scenario);
+  expect(limitedBy).toBe('part');
+  // 3 − d − 10 Ω · 2 mA = 2.1 V.
+  expect(chargeLeftFraction).toBeCloseTo(0.12, 9);
+});

@@ -14,8 +14,8 @@ export interface NodeLoads {
   intervals: IntervalLoad[];
   /** Vectors of the intervals, in excess of rest. One array for all: a hundred small ones cost more than what they hold. */
   intervalExcess: Float64Array;
-  /** Lowest rail voltage of all parts at rest, V, and the part that sets it (−1: none). */
-  restLimit: RailLimit;
+  /** Lowest rail voltage of each part's rest state, V; 0 where it gives none. */
+  restLimitsV: number[];
 }
 
 export interface RailLimit {
@@ -29,7 +29,10 @@ export interface IntervalLoad {
   routineIndex: number;
   /** Where its vector, in excess of rest, begins in `NodeLoads.intervalExcess`. */
   offset: number;
-  limit: RailLimit;
+  /** Limit of the parts that it occupies. */
+  busy: RailLimit;
+  /** Which of the parts that it occupies have a limit at rest, one bit each: those limits do not hold meanwhile. */
+  awayMask: number;
 }
 
 /**
@@ -45,7 +48,8 @@ export function nodeLoads(program: NodeProgram): NodeLoads {
   const rest = new Float64Array(width);
   const draws = [...program.parts.map(({ restDraw }) => restDraw), ...program.leakages.map(({ draw }) => draw)];
   for (const draw of draws) addDraw(rest, 0, { draw, group: groupOf(groups, draw) }, 1);
-  const loads = { groups, width, rest, restLimit: restLimitOf(program) };
+  const restLimitsV = program.parts.map(({ restLowestVoltageV }) => restLowestVoltageV);
+  const loads = { groups, width, rest, restLimitsV };
   return { ...loads, cycleExcess: cycleExcess(program, loads), ...intervalLoads(program, loads) };
 }
 
@@ -66,14 +70,19 @@ function cycleExcess(program: NodeProgram, { groups, width }: Pick<NodeLoads, 'g
 
 function intervalLoads(
   program: NodeProgram,
-  { groups, width, restLimit }: Pick<NodeLoads, 'groups' | 'width' | 'restLimit'>,
+  { groups, width, restLimitsV }: Pick<NodeLoads, 'groups' | 'width' | 'restLimitsV'>,
 ): Pick<NodeLoads, 'intervals' | 'intervalExcess'> {
   const loads: IntervalLoad[] = [];
   program.routines.forEach(({ intervals }, routineIndex) => {
     for (const interval of intervals) {
       if (!(interval.durationS > 0)) continue;
-      const limit = limitOf(program, interval, restLimit);
-      loads.push({ interval, routineIndex, offset: loads.length * width, limit });
+      const busy: RailLimit = { railV: 0, partIndex: -1 };
+      let awayMask = 0;
+      for (const { lowestVoltageV, partIndex } of interval.occupants) {
+        raise(busy, lowestVoltageV, partIndex);
+        if ((restLimitsV[partIndex] ?? 0) > 0) awayMask |= 1 << partIndex;
+      }
+      loads.push({ interval, routineIndex, offset: loads.length * width, busy, awayMask });
     }
   });
   const intervalExcess = new Float64Array(loads.length * width);
@@ -87,21 +96,20 @@ function intervalLoads(
   return { intervals: loads, intervalExcess };
 }
 
-function restLimitOf(program: NodeProgram): RailLimit {
-  const limit: RailLimit = { railV: 0, partIndex: -1 };
-  program.parts.forEach(({ restLowestVoltageV }, partIndex) => raise(limit, restLowestVoltageV, partIndex));
-  return limit;
-}
-
-/** Parts that an interval does not occupy rest, and their rest states may have limits too. */
-function limitOf(program: NodeProgram, { occupants }: Interval, restLimit: RailLimit): RailLimit {
-  const limit: RailLimit = { railV: 0, partIndex: -1 };
-  for (const { lowestVoltageV, partIndex } of occupants) raise(limit, lowestVoltageV, partIndex);
-  if (restLimit.railV > limit.railV) {
-    program.parts.forEach(({ restLowestVoltageV }, partIndex) => {
-      if (restLowestVoltageV <= limit.railV) return;
-      if (!occupants.some((occupant) => occupant.partIndex === partIndex)) raise(limit, restLowestVoltageV, partIndex);
-    });
+/**
+ * Lowest rail voltage of a moment: that of the parts in use, and of the rest states of the others.
+ *
+ * @param restLimitsV Limits of the rest states by part, V.
+ * @param busy Limit of the parts in use.
+ * @param awayMask Parts with a limit at rest that are not at rest.
+ * @returns The limit.
+ * @example railLimit(loads.restLimitsV, { railV: 0, partIndex: -1 }, 0)
+ */
+export function railLimit(restLimitsV: readonly number[], busy: RailLimit, awayMask: number): RailLimit {
+  let limit = busy;
+  for (let partIndex = 0; partIndex < restLimitsV.length; partIndex++) {
+    const railV = restLimitsV[partIndex] ?? 0;
+    if (railV > limit.railV && (awayMask & (1 << partIndex)) === 0) limit = { railV, partIndex };
   }
   return limit;
 }
