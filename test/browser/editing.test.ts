@@ -214,7 +214,7 @@ describe('figures without a maximum', () => {
   it('get an assumed one by one click, for one and for all, and stay marked', async () => {
     await openTab(page, 'Supply');
     const section = page.getByRole('region', { name: 'Figures without a maximum' });
-    const single = section.getByRole('button', { name: /^Assume a maximum for/ });
+    const single = section.getByRole('button', { name: /^max = .* assumed for / });
     const all = section.getByRole('button', { name: /^Assume it for all/ });
     const missing = Number((await all.innerText()).replace(/\D/g, ''));
     expect(missing).toBeGreaterThan(2);
