@@ -1,5 +1,5 @@
 import { DAY_S } from '#common/units/si.ts';
-import type { NodeProgram, Segment } from './node-program.types.ts';
+import type { Activity, NodeProgram, Segment } from './node-program.types.ts';
 import { cyclesPerDay } from './schedule-rate.ts';
 
 /** Share of time of one part in one state, or on one transition. */
@@ -26,15 +26,16 @@ export interface DutyShare {
  */
 export function dutyShares(program: NodeProgram, ratesPerS: readonly number[]): DutyShare[] {
   const byPart = program.parts.map(() => new Map<string, DutyShare>());
+  // Segments of one state mostly share their activity object: found by that, no key is put together.
+  const byActivity = program.parts.map(() => new Map<Activity, DutyShare>());
   program.routines.forEach((routine, routineIndex) => {
     const ratePerS = ratesPerS[routineIndex] ?? 0;
     for (const segment of routine.segments) {
-      const shares = byPart[segment.partIndex];
-      const key = keyOf(segment);
-      let known = shares?.get(key);
+      const activities = byActivity[segment.partIndex];
+      let known = activities?.get(segment.activity);
       if (!known) {
-        known = shareOf(segment, program.parts[segment.partIndex]?.partId ?? '');
-        shares?.set(key, known);
+        known = knownShare(byPart[segment.partIndex], segment, program.parts);
+        activities?.set(segment.activity, known);
       }
       for (const termS of segment.durationTermsS) known.share += ratePerS * termS;
     }
@@ -45,6 +46,17 @@ export function dutyShares(program: NodeProgram, ratesPerS: readonly number[]): 
     const share = Math.max(0, 1 - busy);
     return [{ partIndex, partId, stateId: restStateId, fromStateId: null, share, draw: restDraw }, ...shares];
   });
+}
+
+function knownShare(
+  shares: Map<string, DutyShare> | undefined,
+  segment: Segment,
+  parts: NodeProgram['parts'],
+): DutyShare {
+  const key = keyOf(segment);
+  const known = shares?.get(key) ?? shareOf(segment, parts[segment.partIndex]?.partId ?? '');
+  shares?.set(key, known);
+  return known;
 }
 
 function keyOf({ activity }: Segment): string {
