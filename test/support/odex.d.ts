@@ -1,3 +1,4 @@
+/* eslint-disable max-params -- the signatures are the package's own */
 /** What is used of `odex`. The package ships its TypeScript source, which the compiler would check with our strict settings. */
 
 /** Computes y' = f(x, y). */

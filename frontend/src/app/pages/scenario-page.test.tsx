@@ -198,9 +198,13 @@ describe('unsaved work of an earlier visit', () => {
   test('is kept while one types and gone once it is saved', async () => {
     openPage([{ body: detail({ version: 5, revision: 4 }) }]);
     await rename('New');
-    await waitFor(() => expect(localStorage.getItem(`overwinter.draft.${uuid(1)}.${ID}`)).toContain('New'), { timeout: 5_000 });
+    await waitFor(() => expect(localStorage.getItem(`overwinter.draft.${uuid(1)}.${ID}`)).toContain('New'), {
+      timeout: 5_000,
+    });
     key('s');
-    await waitFor(() => expect(localStorage.getItem(`overwinter.draft.${uuid(1)}.${ID}`)).toBeNull(), { timeout: 5_000 });
+    await waitFor(() => expect(localStorage.getItem(`overwinter.draft.${uuid(1)}.${ID}`)).toBeNull(), {
+      timeout: 5_000,
+    });
   });
 });
 
