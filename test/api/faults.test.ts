@@ -105,7 +105,8 @@ describe('a database that is away', () => {
 
 describe('POST /session under load', () => {
   test('more hashes than may run and wait are refused with 503, unnoted as attempts', async () => {
-    const api = await start('flood', { bcryptCost: 10, hashing: { maxAtOnce: 1, maxWaiting: 1 } });
+    // Hashing yields every 100 ms only: the cost must be high enough for the others to arrive meanwhile.
+    const api = await start('flood', { bcryptCost: 13, hashing: { maxAtOnce: 1, maxWaiting: 1 } });
     const client = await new ApiClient(api).open();
     const answers = await Promise.all(
       Array.from({ length: 16 }, (_, at) =>
