@@ -42,7 +42,6 @@ export default defineConfig({
           environment: 'node',
           include: ['test/browser/**/*.test.ts'],
           globalSetup: [...needsPostgres, 'test/support/built-app-setup.ts'],
-          fileParallelism: false,
           testTimeout: 120_000,
           hookTimeout: 120_000,
         },

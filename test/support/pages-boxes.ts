@@ -17,9 +17,13 @@ export async function boxesOf(page: Page, selectors: Record<string, string>): Pr
   }, selectors);
 }
 
-/** By how many pixels the page is wider than its window. */
+const overflowNow = (page: Page): Promise<number> =>
+  page.evaluate(() => document.documentElement.scrollWidth - document.documentElement.clientWidth);
+
+/** By how many pixels the page stays wider than its window; charts take a moment to follow a new width. */
 export async function overflowPx(page: Page): Promise<number> {
-  return page.evaluate(() => document.documentElement.scrollWidth - document.documentElement.clientWidth);
+  for (let tries = 0; tries < 20 && (await overflowNow(page)) > 0; tries += 1) await page.waitForTimeout(100);
+  return overflowNow(page);
 }
 
 /** Presses Tab until the focused element has this text, label or name; throws when it never has. */

@@ -83,7 +83,7 @@ export function CurveChart({ picture, time, dekads, pointed, onPoint }: Props) {
         aria-valuemax={last}
         aria-valuenow={shown}
         aria-valuetext={dekad ? `${dekadInWords(dekad)}: ${valuesInWords(picture, shown)}` : ''}
-        className="relative h-48"
+        className="relative h-48 overflow-x-clip"
         onPointerMove={handlePointer}
         onPointerDown={handlePointer}
         onPointerLeave={() => onPoint(null)}
