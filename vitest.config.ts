@@ -16,14 +16,24 @@ export default defineConfig({
           name: 'unit',
           environment: 'node',
           include: ['{common,backend}/src/**/*.test.ts', 'test/lint/**/*.test.ts'],
-          testTimeout: 20_000,
+          testTimeout: 60_000,
+          // Pure functions share a worker: loading them once per file took longer than testing them.
+          isolate: false,
         },
       },
       {
         plugins: [react()],
         test: { name: 'ui', environment: 'happy-dom', include: ['frontend/src/**/*.test.{ts,tsx}'] },
       },
-      { test: { name: 'truth', environment: 'node', include: ['test/truth/**/*.test.ts'], testTimeout: 60_000 } },
+      {
+        test: {
+          name: 'truth',
+          environment: 'node',
+          include: ['test/truth/**/*.test.ts'],
+          testTimeout: 60_000,
+          isolate: false,
+        },
+      },
       {
         test: {
           name: 'api',
