@@ -114,9 +114,11 @@ async function main() {
     env['TEST_DATABASE_URL'] = (await starting).baseUrl;
     goOn();
   }
-  // Checks beside the quick suites, so that no core idles; the suites with a real browser and database come alone.
+  // Two lanes for two cores; the suites with a real browser and database come alone.
   const isWhole = asked.length === 0;
-  const first = isWhole ? await Promise.all([checks(), suites(quick, env)]) : [await suites(quick, env)];
+  const first = isWhole
+    ? await Promise.all([checks(), suites(quick, { ...env, TEST_WORKERS: '1' })])
+    : [await suites(quick, env)];
   total = sum([...first, await suites(slow, env)]);
   return total.failed === 0 ? 0 : 1;
 }
