@@ -1,4 +1,5 @@
 import type { Scenario } from '#common/engine/scenario/scenario.types.ts';
+import { MONTH_NAMES } from '#common/units/format-duration.ts';
 
 type Path = readonly (string | number)[];
 
@@ -33,21 +34,6 @@ const ITEMS: Readonly<Record<string, string>> = {
   receiveWindows: 'receive window',
 };
 
-const MONTHS = [
-  'January',
-  'February',
-  'March',
-  'April',
-  'May',
-  'June',
-  'July',
-  'August',
-  'September',
-  'October',
-  'November',
-  'December',
-];
-
 const UNIT_SUFFIX = /(VPerK|PerK|Ohm|Dbm|Ppm|Bps|Hz|Kg|M3|A|C|F|J|K|S|V)$/;
 
 /** A path into a document in words: names of parts, states, routines and steps, then the field. */
@@ -81,7 +67,7 @@ function wordOf({ document, part, list, segment, next, isOfStep }: Segment): str
   // The item that follows says it.
   if (segment in ITEMS || (segment === 'months' && list === 'climate')) return '';
   if (typeof segment === 'string') return fieldWords(segment);
-  if (list === 'months') return MONTHS[segment] ?? `month ${segment + 1}`;
+  if (list === 'months') return MONTH_NAMES[segment] ?? `month ${segment + 1}`;
   if (list === 'transitions') {
     const states = child(part, 'states');
     const end = (key: string): string => nameIn(states, String(child(next, key)));
