@@ -1,5 +1,5 @@
 import type { z } from 'zod';
-import type { Node, Part, Quantity, Routine } from '#common/engine/scenario/scenario.types.ts';
+import type { KeepAlive, Node, Part, Quantity, Routine } from '#common/engine/scenario/scenario.types.ts';
 
 type Refinement = z.core.$RefinementCtx;
 type Path = (string | number)[];
@@ -30,6 +30,17 @@ export function checkQuantityOrder(quantity: Pick<Quantity, 'min' | 'typical' | 
       message: `The maximum ${quantity.max} is below the typical ${quantity.typical}.`,
     });
   }
+}
+
+/** The shortest of poll, supervision and child timeout is the period. */
+export function checkKeepAlive(
+  { periodS, keepAlive }: { periodS: number; keepAlive?: KeepAlive | undefined },
+  context: Refinement,
+): void {
+  const given = Object.values(keepAlive ?? {}).filter((timeS): timeS is number => typeof timeS === 'number');
+  if (given.length === 0 || Math.min(...given) === periodS) return;
+  const message = `The period is the shortest of poll, supervision and child timeout: ${Math.min(...given)} s.`;
+  context.addIssue({ code: 'custom', path: ['periodS'], message });
 }
 
 /** Ids are unique and every reference inside a node points to something that exists. */

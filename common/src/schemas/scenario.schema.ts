@@ -16,7 +16,13 @@ import type {
   Target,
 } from '#common/engine/scenario/scenario.types.ts';
 import { LIMITS, SCHEMA_VERSION } from './limits.ts';
-import { checkNodeReferences, checkQuantityOrder, isIncreasing, isWholeMicroseconds } from './scenario-rules.ts';
+import {
+  checkKeepAlive,
+  checkNodeReferences,
+  checkQuantityOrder,
+  isIncreasing,
+  isWholeMicroseconds,
+} from './scenario-rules.ts';
 
 const name = z.string().trim().min(1, 'Give it a name.').max(LIMITS.nameLength);
 /** Ids become keys and parts of paths, hence the narrow alphabet; the three names are those of object internals. */
@@ -124,8 +130,16 @@ const whenSchema = z.strictObject({
 const when = { when: whenSchema.optional() };
 const hour = finite.min(0, 'Hours from 0 to 24.').max(24, 'Hours from 0 to 24.');
 
+const keepAliveSchema = z.strictObject({
+  pollS: periodS.optional(),
+  supervisionS: periodS.optional(),
+  childTimeoutS: periodS.optional(),
+});
+
 export const scheduleSchema = z.discriminatedUnion('kind', [
-  z.strictObject({ kind: z.literal('every'), periodS, ...when }),
+  z
+    .strictObject({ kind: z.literal('every'), periodS, keepAlive: keepAliveSchema.optional(), ...when })
+    .superRefine(checkKeepAlive),
   z.strictObject({
     kind: z.literal('random'),
     meanPerDay: nonNegative,
@@ -160,6 +174,30 @@ const customPhySchema = z.strictObject({
 });
 const addressMode = z.enum(['none', 'short', 'extended']);
 
+const crystalSchema = z.strictObject({
+  startUpS: durationS.optional(),
+  tolerancePpm: nonNegative.optional(),
+  temperaturePpm: nonNegative.optional(),
+  ageingPpm: nonNegative.optional(),
+  pulling: z
+    .strictObject({
+      motionalCapacitanceF: positive,
+      shuntCapacitanceF: nonNegative,
+      loadCapacitanceF: positive,
+      mountedCapacitanceF: positive,
+    })
+    .optional(),
+});
+
+export const dutyCycleBandSchema = z.enum([
+  'eu-863-865',
+  'eu-865-868',
+  'eu-868.0-868.6',
+  'eu-868.7-869.2',
+  'eu-869.4-869.65',
+  'eu-869.7-870.0',
+]);
+
 export const linkSettingsSchema = z.strictObject({
   phy: z.union([phyIdSchema, customPhySchema]).optional(),
   preambleOctets: octets.optional(),
@@ -182,7 +220,9 @@ export const linkSettingsSchema = z.strictObject({
   frameErrorRate: probabilityQuantity.optional(),
   ackErrorRate: probabilityQuantity.optional(),
   receivedLevelDbm: quantitySchema.optional(),
+  receivedLevelStepDb: nonNegative.optional(),
   sensitivityDbm: finite.optional(),
+  noiseDbm: finite.optional(),
   macMinBE: z.int().min(0).max(8).optional(),
   macMaxBE: z.int().min(3).max(8).optional(),
   macMaxCSMABackoffs: z.int().min(0).max(5).optional(),
@@ -191,12 +231,25 @@ export const linkSettingsSchema = z.strictObject({
   backoffIn: z.enum(['idle', 'sleep']).optional(),
   tolerancePpm: currentQuantity.optional(),
   peerTolerancePpm: currentQuantity.optional(),
+  crystal: crystalSchema.optional(),
+  dutyCycleBand: dutyCycleBandSchema.optional(),
 }) satisfies z.ZodType<LinkSettings>;
 
 const exchange = {
   kind: z.literal('exchange'),
   radioPartId: idSchema.optional(),
   link: linkSettingsSchema.optional(),
+  loading: z
+    .strictObject({
+      partId: idSchema,
+      stateId: idSchema,
+      clockHz: positive,
+      bitsPerOctet: positive.optional(),
+      overheadPerOctetS: durationS.optional(),
+      overheadS: durationS.optional(),
+      beside: z.boolean().optional(),
+    })
+    .optional(),
 };
 const frameOctets = { payloadOctets: octets.optional(), psduOctets: octets.optional() };
 const order = z.int().min(0).max(14);
@@ -229,6 +282,7 @@ const exchangeSchema = z.discriminatedUnion('pattern', [
     superframeOrder: order,
     beaconPsduOctets: octets,
     missedBeaconProbability: probabilityQuantity.optional(),
+    contentionS: durationS.optional(),
   }),
   z.strictObject({
     ...exchange,
@@ -237,6 +291,7 @@ const exchangeSchema = z.discriminatedUnion('pattern', [
     psduOctets: octets.optional(),
     ackPsduOctets: octets.optional(),
     shared: z.boolean().optional(),
+    template: z.enum(['oqpsk-10-ms', 'oqpsk-15-ms', 'sun-fsk-50-40-ms']).optional(),
   }),
   z.strictObject({
     ...exchange,
@@ -281,6 +336,28 @@ const exchangeSchema = z.discriminatedUnion('pattern', [
     dataOctets: octets,
     channels: z.int().min(1).max(3),
     scanResponse: z.boolean().optional(),
+    scanRequestProbability: probabilityQuantity.optional(),
+  }),
+  z.strictObject({
+    ...exchange,
+    pattern: z.literal('receive'),
+    ...frameOctets,
+    ackPsduOctets: octets.optional(),
+    listenS: durationS.optional(),
+  }),
+  z.strictObject({ ...exchange, pattern: z.literal('forward'), ...frameOctets, ackPsduOctets: octets.optional() }),
+  z.strictObject({
+    ...exchange,
+    pattern: z.literal('overhear'),
+    ...frameOctets,
+    stopsAfterHeader: z.boolean().optional(),
+  }),
+  z.strictObject({
+    ...exchange,
+    pattern: z.literal('scan'),
+    channels: z.int().min(1).max(1_024),
+    scanDuration: order,
+    retuneS: durationS,
   }),
 ]);
 

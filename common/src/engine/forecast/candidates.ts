@@ -20,8 +20,15 @@ export interface Candidate {
   freshOhm: number;
   /** The interval, null for rest. */
   source: IntervalLoad | null;
-  /** Its load on the cell, once made, where nothing depends on temperature. */
-  fixedLoad?: CellLoad;
+}
+
+/** A candidate with its load on the cell. */
+export interface TestCase {
+  load: CellLoad;
+  limitV: number;
+  /** Of the fresh pack at 20 °C, Ω. */
+  freshOhm: number;
+  candidate: Candidate;
 }
 
 export interface CandidateContext {
@@ -37,6 +44,8 @@ export interface CandidateLists {
   all: Candidate[];
   /** Rest with whatever runs always. */
   rest: Candidate[];
+  /** The cases of `all`, once made, where no load depends on temperature. */
+  fixedCases?: TestCase[];
 }
 
 /**

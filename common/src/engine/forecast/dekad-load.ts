@@ -1,15 +1,6 @@
 import type { CalendarDekad } from '../climate/dekads.ts';
 import type { CellLoad } from '../supply/cell-load.ts';
-import type { Candidate, CandidateLists } from './candidates.ts';
-
-/** A candidate at one temperature. */
-export interface TestCase {
-  load: CellLoad;
-  limitV: number;
-  /** Of the pack at this temperature and depth 0, Ω. */
-  ohm: number;
-  candidate: Candidate;
-}
+import type { CandidateLists, TestCase } from './candidates.ts';
 
 /** What decides at one temperature whether the node works. */
 export interface TestConditions {
@@ -18,6 +9,8 @@ export interface TestConditions {
   capacityFactor: number;
   /** Added to the pack's open-circuit voltage of 20 °C, V. */
   openCircuitShiftV: number;
+  /** Of the pack's resistance against that of 20 °C. */
+  resistanceFactor: number;
   cases: TestCase[];
   /** Rest alone, for the monitor. */
   restCases: TestCase[];

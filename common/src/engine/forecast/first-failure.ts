@@ -1,7 +1,8 @@
 import type { LoadSight } from '../supply/cell-load.ts';
 import { loadedVoltageV } from '../supply/cell-load.ts';
 import { firstFailingShare } from '../supply/first-failing-share.ts';
-import type { TestCase, TestConditions } from './dekad-load.ts';
+import type { TestCase } from './candidates.ts';
+import type { TestConditions } from './dekad-load.ts';
 import { sourceAt, stretchOf } from './source-tables.ts';
 import type { SourceTables } from './source-tables.ts';
 
@@ -42,7 +43,7 @@ export function firstFailure(
     sourceAt(source, endDepth, high);
     piece.openCircuitFromV = low.openCircuitV + openCircuitShiftV;
     piece.openCircuitToV = high.openCircuitV + openCircuitShiftV;
-    const first = firstOf(conditions.cases, sight, source.room);
+    const first = firstOf(conditions, sight, source.room);
     if (first) {
       const failingDepth = depth + first.share * (endDepth - depth);
       const spent = first.share === 0 && depth === fromDepth ? fromSpent : failingDepth * capacityFactor;
@@ -68,30 +69,32 @@ export function firstFailure(
  */
 export function worksAt(
   source: SourceTables,
-  { capacityFactor, openCircuitShiftV, cases }: TestConditions,
+  { capacityFactor, openCircuitShiftV, resistanceFactor, cases }: TestConditions,
   sight: LoadSight,
   spent: number,
 ): boolean {
   if (spent >= capacityFactor) return false;
   const point = sourceAt(source, spent / capacityFactor, source.room.low);
   const openCircuitV = point.openCircuitV + openCircuitShiftV;
-  for (const { load, limitV, ohm } of cases) {
-    if (!(loadedVoltageV(load, sight, openCircuitV, ohm * point.resistanceFactor) >= limitV)) return false;
+  for (const { load, limitV, freshOhm } of cases) {
+    const ohm = freshOhm * resistanceFactor * point.resistanceFactor;
+    if (!(loadedVoltageV(load, sight, openCircuitV, ohm) >= limitV)) return false;
   }
   return true;
 }
 
 /** The case that fails first between the two points of a room, whose piece has the voltages already. */
 function firstOf(
-  cases: readonly TestCase[],
+  { cases, resistanceFactor }: TestConditions,
   sight: LoadSight,
   { low, high, piece }: SourceTables['room'],
 ): { share: number; testCase: TestCase } | null {
   let firstShare = Infinity;
   let first: TestCase | null = null;
   for (const testCase of cases) {
-    piece.resistanceFromOhm = low.resistanceFactor * testCase.ohm;
-    piece.resistanceToOhm = high.resistanceFactor * testCase.ohm;
+    const ohm = testCase.freshOhm * resistanceFactor;
+    piece.resistanceFromOhm = low.resistanceFactor * ohm;
+    piece.resistanceToOhm = high.resistanceFactor * ohm;
     const share = firstFailingShare(testCase, sight, piece);
     if (share === null || share >= firstShare) continue;
     firstShare = share;
@@ -122,7 +125,7 @@ export interface LeastHeadroom {
  */
 export function leastHeadroom(
   source: SourceTables,
-  { capacityFactor, openCircuitShiftV, cases }: TestConditions,
+  { capacityFactor, openCircuitShiftV, resistanceFactor, cases }: TestConditions,
   view: { sight: LoadSight; highestRailV: number },
   spent: number,
 ): LeastHeadroom | null {
@@ -132,7 +135,8 @@ export function leastHeadroom(
   let leastV = Infinity;
   let loadedV = 0;
   for (const testCase of cases) {
-    const voltageV = loadedVoltageV(testCase.load, view.sight, openCircuitV, testCase.ohm * point.resistanceFactor);
+    const ohm = testCase.freshOhm * resistanceFactor * point.resistanceFactor;
+    const voltageV = loadedVoltageV(testCase.load, view.sight, openCircuitV, ohm);
     // A collapse and a limit out of reach are worse than any voltage.
     const headroomV = Number.isNaN(voltageV) ? -Infinity : voltageV - testCase.limitV;
     if (least !== null && headroomV >= leastV) continue;

@@ -1,11 +1,9 @@
 import { capacityTemperatureFactor, openCircuitShiftV, resistanceTemperatureFactor } from '../supply/cell-figures.ts';
 import { selfDischargeRatePerS } from '../supply/self-discharge-rate.ts';
-import type { CellLoad } from '../supply/cell-load.ts';
-import type { Candidate } from './candidates.ts';
+import type { Candidate, CandidateLists, TestCase } from './candidates.ts';
 import type { CompiledScenario } from './compile-scenario.ts';
 import { cellLoad } from './converter.ts';
-import type { Converter } from './converter.ts';
-import type { DekadLoad, MeanLoad, TestCase, TestConditions } from './dekad-load.ts';
+import type { DekadLoad, MeanLoad, TestConditions } from './dekad-load.ts';
 import { groupFactors, weighGroups } from './load-vector.ts';
 import { meanPieces } from './mean-pieces.ts';
 
@@ -88,7 +86,7 @@ function meanLoad(
  */
 export function testConditions(
   compiled: CompiledScenario,
-  lists: DekadLoad['lists'],
+  lists: CandidateLists,
   temperatureC: number,
 ): TestConditions {
   const { scenario, pack } = compiled;
@@ -97,9 +95,16 @@ export function testConditions(
     temperatureC,
     capacityFactor: capacityTemperatureFactor(cell.capacityFactorByTemperature, temperatureC),
     openCircuitShiftV: pack.openCircuitFactor * openCircuitShiftV(cell, temperatureC),
-    cases: testCases(compiled, lists.all, temperatureC),
+    resistanceFactor: resistanceTemperatureFactor(cell.resistanceFactorByTemperature, temperatureC),
+    cases: casesAt(compiled, lists, temperatureC),
     restCases: lowBattery?.readAt === 'rest' ? testCases(compiled, lists.rest, temperatureC) : [],
   };
+}
+
+/** All days share their cases where no load depends on temperature. */
+function casesAt(compiled: CompiledScenario, lists: CandidateLists, temperatureC: number): TestCase[] {
+  if (compiled.loads.groups.length > 1) return testCases(compiled, lists.all, temperatureC);
+  return (lists.fixedCases ??= testCases(compiled, lists.all, temperatureC));
 }
 
 /**
@@ -108,28 +113,19 @@ export function testConditions(
  * @param compiled The scenario.
  * @param candidates The candidates.
  * @param temperatureC Temperature, °C.
- * @returns Loads, limits and resistances.
+ * @returns Loads, limits and fresh resistances.
  * @example testCases(compiled, lists.all, 20)
  */
 export function testCases(
-  { loads, converter, scenario }: CompiledScenario,
+  { loads, converter }: CompiledScenario,
   candidates: readonly Candidate[],
   temperatureC: number,
 ): TestCase[] {
-  const { resistanceFactorByTemperature } = scenario.supply.cell;
-  const resistanceFactor = resistanceTemperatureFactor(resistanceFactorByTemperature, temperatureC);
-  const isFixed = loads.groups.length === 1;
   const factors = groupFactors(loads.groups, temperatureC, 0);
   return candidates.map((candidate) => ({
-    load: isFixed
-      ? (candidate.fixedLoad ??= loadAt(converter, candidate, factors))
-      : loadAt(converter, candidate, factors),
+    load: cellLoad(converter, weighGroups(candidate.vector, 0, factors)),
     limitV: candidate.limitV,
-    ohm: candidate.freshOhm * resistanceFactor,
+    freshOhm: candidate.freshOhm,
     candidate,
   }));
-}
-
-function loadAt(converter: Converter, { vector }: Candidate, factors: readonly number[]): CellLoad {
-  return cellLoad(converter, weighGroups(vector, 0, factors));
 }

@@ -90,8 +90,9 @@ function readingAt(compiled: CompiledScenario, load: DekadLoad, spent: number): 
   const point = sourceAt(source, spent / cold.capacityFactor, { openCircuitV: 0, resistanceFactor: 0 });
   const openCircuitV = point.openCircuitV + cold.openCircuitShiftV;
   let lowestV = Infinity;
-  for (const { load: restLoad, ohm } of cold.restCases) {
-    const voltageV = loadedVoltageV(restLoad, converter.sight, openCircuitV, ohm * point.resistanceFactor);
+  for (const { load: restLoad, freshOhm } of cold.restCases) {
+    const ohm = freshOhm * cold.resistanceFactor * point.resistanceFactor;
+    const voltageV = loadedVoltageV(restLoad, converter.sight, openCircuitV, ohm);
     lowestV = Math.min(lowestV, Number.isNaN(voltageV) ? 0 : voltageV);
   }
   return railVoltageV(converter, lowestV);

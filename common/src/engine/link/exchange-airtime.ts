@@ -14,7 +14,10 @@ export interface ExchangeAirtime {
   notCounted: string | null;
 }
 
-type FramePattern = 'frame' | 'acknowledged' | 'unacknowledged' | 'listen-before-talk' | 'slot' | 'sampled-sender';
+type FramePattern = Exclude<
+  ExchangeDuration['pattern'],
+  'chirp' | 'advertising' | 'poll' | 'beacon' | 'sampled-listener' | 'guard' | 'scan'
+>;
 
 /** Size of a frame as a step gives it. */
 interface FrameSize {
@@ -30,6 +33,9 @@ const NOT_COUNTED: Readonly<Record<FramePattern, string | null>> = {
   'listen-before-talk': 'listening, channel changes, acknowledgement and retries',
   slot: 'the rest of the slot',
   'sampled-sender': 'wake-up frames and channel access',
+  receive: 'listening and acknowledgement',
+  forward: 'reception, channel access, acknowledgements and retries',
+  overhear: null,
 };
 
 /** A command frame's identifier, octets. */
@@ -68,6 +74,8 @@ export function exchangeAirtime(exchange: ExchangeDuration, link: LinkSettings):
       throw noFrame('A beacon-enabled superframe');
     case 'sampled-listener':
       throw noFrame('A sampling listener');
+    case 'scan':
+      throw noFrame('A scan');
     case 'guard':
       throw noFrame('A guard window');
     default:

@@ -86,8 +86,18 @@ export interface When {
   aboveC?: number;
 }
 
+/** Periods of a child that must be heard from; the shortest of those given is the period that counts, and equals `periodS`. */
+export interface KeepAlive {
+  /** Longest latency that messages to the child may have, s. */
+  pollS?: number;
+  /** Supervision by the network: how often the child has to be heard, s. */
+  supervisionS?: number;
+  /** Time after which the parent drops a silent child, s. */
+  childTimeoutS?: number;
+}
+
 export type Schedule = (
-  | { kind: 'every'; periodS: number }
+  | { kind: 'every'; periodS: number; keepAlive?: KeepAlive }
   | { kind: 'random'; meanPerDay: number; busiestPerDay?: number }
   | { kind: 'window'; fromHour: number; toHour: number; periodS: number }
   | { kind: 'once'; afterS: number }
@@ -130,6 +140,50 @@ export interface FrameFormat {
   fcsOctets?: 2 | 4;
 }
 
+/** How far a radio's crystal may be off, and how long it takes to start. Parts per million add up in the worst case. */
+export interface Crystal {
+  /** Start of the oscillator at each wake, s. */
+  startUpS?: number;
+  /** Make tolerance at 25 °C, ± ppm. */
+  tolerancePpm?: number;
+  /** Over the temperatures of the climate, ± ppm. */
+  temperaturePpm?: number;
+  /** Over the life, ± ppm. */
+  ageingPpm?: number;
+  /** Pulling by another load than the crystal was made for; all four together. */
+  pulling?: {
+    motionalCapacitanceF: number;
+    shuntCapacitanceF: number;
+    /** Load that the crystal was made for. */
+    loadCapacitanceF: number;
+    /** Load that the board gives it. */
+    mountedCapacitanceF: number;
+  };
+}
+
+/** Regional sub-bands with a limit on the share of time on air. */
+export type DutyCycleBandId =
+  'eu-863-865' | 'eu-865-868' | 'eu-868.0-868.6' | 'eu-868.7-869.2' | 'eu-869.4-869.65' | 'eu-869.7-870.0';
+
+/** Timing template of a slotted network. */
+export type SlotTemplateId = 'oqpsk-10-ms' | 'oqpsk-15-ms' | 'sun-fsk-50-40-ms';
+
+/** Loading of the frame into the radio over a serial line before it is sent. */
+export interface FrameLoading {
+  /** Part that sends the octets, and its state meanwhile. */
+  partId: string;
+  stateId: string;
+  clockHz: number;
+  /** Default 8. */
+  bitsPerOctet?: number;
+  /** Default 0. */
+  overheadPerOctetS?: number;
+  /** Default 0. */
+  overheadS?: number;
+  /** Loading while the frame is already being sent; default false: before the exchange. */
+  beside?: boolean;
+}
+
 /** Radio link settings; those of the node are the defaults of its exchange steps. */
 export interface LinkSettings {
   phy?: PhyId | CustomPhy;
@@ -140,7 +194,12 @@ export interface LinkSettings {
   frameErrorRate?: Quantity;
   ackErrorRate?: Quantity;
   receivedLevelDbm?: Quantity;
+  /** Steps in which the receiver tells its level, dB: the level counts rounded down to them. */
+  receivedLevelStepDb?: number;
+  /** Level at which the receiver loses 1 % of frames with a PSDU of 20 octets, dBm; stands for the noise where that is not given. */
   sensitivityDbm?: number;
+  /** Noise and interference in the receiver's bandwidth, dBm. */
+  noiseDbm?: number;
   macMinBE?: number;
   macMaxBE?: number;
   macMaxCSMABackoffs?: number;
@@ -149,6 +208,8 @@ export interface LinkSettings {
   backoffIn?: 'idle' | 'sleep';
   tolerancePpm?: Quantity;
   peerTolerancePpm?: Quantity;
+  crystal?: Crystal;
+  dutyCycleBand?: DutyCycleBandId;
 }
 
 /** What an exchange step does on the air. Frame sizes: `psduOctets` counts the FCS; otherwise it follows from payload and frame format. */
@@ -178,6 +239,8 @@ export type ExchangePattern =
       superframeOrder: number;
       beaconPsduOctets: number;
       missedBeaconProbability?: Quantity;
+      /** Time the receiver stays on in the contention period after a beacon, s; default 0. */
+      contentionS?: number;
     }
   | {
       pattern: 'slot';
@@ -185,6 +248,8 @@ export type ExchangePattern =
       psduOctets?: number;
       ackPsduOctets?: number;
       shared?: boolean;
+      /** Default: that of the PHY. */
+      template?: SlotTemplateId;
     }
   | { pattern: 'sampled-listener'; periodUnits: number; sampleS: number }
   | { pattern: 'sampled-sender'; periodUnits: number; psduOctets: number; synchronised?: boolean }
@@ -207,9 +272,22 @@ export type ExchangePattern =
       dataOctets: number;
       channels: number;
       scanResponse?: boolean;
-    };
+      /** Share of channels on which somebody asks for the scan response; default: assumed. */
+      scanRequestProbability?: Quantity;
+    }
+  | { pattern: 'receive'; payloadOctets?: number; psduOctets?: number; ackPsduOctets?: number; listenS?: number }
+  | { pattern: 'forward'; payloadOctets?: number; psduOctets?: number; ackPsduOctets?: number }
+  | { pattern: 'overhear'; payloadOctets?: number; psduOctets?: number; stopsAfterHeader?: boolean }
+  | { pattern: 'scan'; channels: number; scanDuration: number; retuneS: number };
 
-export type ExchangeDuration = { kind: 'exchange'; radioPartId?: string; link?: LinkSettings } & ExchangePattern;
+export type ExchangeDuration = {
+  kind: 'exchange';
+  /** Radio whose states the sub-steps take; default: the only part of kind `radio`. */
+  radioPartId?: string;
+  /** What differs from the link settings of the node. */
+  link?: LinkSettings;
+  loading?: FrameLoading;
+} & ExchangePattern;
 
 export interface SerialDuration {
   kind: 'serial';
