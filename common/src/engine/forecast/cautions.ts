@@ -164,7 +164,8 @@ function regulatorCautions({ scenario, source, loads, converter }: CompiledScena
     const message = `The monitor reads the rail, which the regulator holds at ${formatVoltage(regulator.outputV)} until it fails, so it cannot warn.`;
     cautions.push({ code: 'monitor-reads-regulated-rail', message, path: 'supply.lowBattery' });
   }
-  const highestV = Math.max(0, ...loads.restLimitsV, ...loads.intervals.map(({ busy }) => busy.railV));
+  let highestV = Math.max(0, ...loads.restLimitsV);
+  for (const { busy } of loads.intervals) highestV = Math.max(highestV, busy.railV);
   if (highestV > converter.highestRailV) {
     const output = formatVoltage(converter.highestRailV);
     const message = `A part needs ${formatVoltage(highestV)}, but the regulator gives only ${output}: that part never works.`;

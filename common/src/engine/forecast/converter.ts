@@ -60,8 +60,8 @@ export function lowestEfficiency(efficiency: number | [number, number][]): numbe
  * @example cellLoad(converter, { constantA: 0.01, powerW: 0, conductanceS: 0 })
  */
 export function cellLoad(converter: Converter, rail: RailLoad): CellLoad {
-  const load = converted(converter, rail);
-  return { ...load, constantA: load.constantA + converter.quiescentA };
+  const { constantA, powerW, conductanceS } = converted(converter, rail);
+  return { constantA: constantA + converter.quiescentA, powerW, conductanceS };
 }
 
 /**

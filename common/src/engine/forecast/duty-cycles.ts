@@ -27,8 +27,8 @@ export function dutyCycles(compiled: CompiledScenario, usage: Usage): DutyCycle[
     const timeS = usage.timeS[dekad] ?? 0;
     if (timeS === 0) continue;
     const load = compiled.dekadLoad(dekad);
-    load.ratesPerS.forEach((ratePerS, index) => (cycles[index] = (cycles[index] ?? 0) + ratePerS * timeS));
-    load.meanFactors.forEach((factor, index) => (unitFactors[index] = (unitFactors[index] ?? 0) + factor * timeS));
+    addTimes(cycles, load.ratesPerS, timeS);
+    addTimes(unitFactors, load.meanFactors, timeS);
     voltS += timeS * railAt(compiled, dekad, usage);
   }
   for (const { routineIndex } of usage.once) cycles[routineIndex] = (cycles[routineIndex] ?? 0) + 1;
@@ -39,9 +39,14 @@ export function dutyCycles(compiled: CompiledScenario, usage: Usage): DutyCycle[
   ).map((duty) => {
     const { partId, stateId, fromStateId, share, draw } = duty;
     const factor = (unitFactors[groupOf(loads.groups, draw)] ?? 0) / lifeS;
-    const nominalA = drawAt({ ...draw, doublingK: null }, { voltageV: railV, temperatureC: 0 });
+    // At the reference temperature a doubling has no effect.
+    const nominalA = drawAt(draw, { voltageV: railV, temperatureC: draw.referenceTemperatureC });
     return { partId, stateId, fromStateId, share, meanCurrentA: share * factor * nominalA };
   });
+}
+
+function addTimes(sums: number[], values: ArrayLike<number>, timeS: number): void {
+  for (let index = 0; index < sums.length; index++) sums[index] = (sums[index] ?? 0) + (values[index] ?? 0) * timeS;
 }
 
 /** Mean rail voltage in a calendar dekad of life, V. */

@@ -39,9 +39,10 @@ export function afterFailure(compiled: CompiledScenario, run: Run, latestS: numb
     if (state.timeS - lastReportS > DEKADS * DEKAD_S) break;
     const load = compiled.dekadLoad((compiled.startDekad + dekad) % DEKADS);
     const endS = Math.min((dekad + 1) * DEKAD_S, lastS);
-    const passed = passDekad(compiled, { load, startingC: run.startingC, endS, hours }, state);
+    const winter = winterOf(compiled, dekad);
+    const passed = passDekad(compiled, { load, startingC: run.startingC, endS, hours, winter }, state);
     lastReportS = Math.max(lastReportS, passed.lastReportS);
-    if (passed.silence) silences.push({ ...passed.silence, winter: winterOf(compiled, dekad) });
+    if (passed.silence) silences.push(passed.silence);
   }
   return { outages: outagesOf(silences, lastReportS), lastReportS };
 }
@@ -62,16 +63,17 @@ interface Passage {
   startingC: number;
   endS: number;
   hours: DayHours;
+  winter: number;
 }
 
 /** Goes on to the end of a dekad, with its silence from the moment in which its coldest hour fails. */
 function passDekad(
   compiled: CompiledScenario,
-  { load, startingC, endS, hours }: Passage,
+  { load, startingC, endS, hours, winter }: Passage,
   state: Walk,
-): { silence: Omit<Silence, 'winter'> | null; lastReportS: number } {
+): { silence: Silence | null; lastReportS: number } {
   const { source, converter } = compiled;
-  const start = { ...state };
+  const start = copyOf(state);
   walkOn(load.mean, startingC, { timeS: endS - start.timeS, spent: 1 }, state);
   state.timeS = endS;
   const range = { fromSpent: start.spent, toSpent: Math.max(start.spent, state.spent) };
@@ -80,12 +82,16 @@ function passDekad(
   const passage = { load, startingC, leftS: endS - start.timeS };
   const startS = timeAtS(passage, start, cold.spent);
   const middle = (cold.spent + range.toSpent) / 2;
-  const silence = { startS, endS, share: hours.silentShare(load, middle) };
+  const silence = { startS, endS, share: hours.silentShare(load, middle), winter };
   // Until the coldest hour fails all hours work; where it fails from the beginning only the others can tell.
   const coldReportS = startS > start.timeS ? startS : 0;
   const until = hours.worksUntil(load, range);
   if (until === null) return { silence, lastReportS: coldReportS };
   return { silence, lastReportS: until === Infinity ? endS : Math.max(coldReportS, timeAtS(passage, start, until)) };
+}
+
+function copyOf({ spent, timeS, spentS, perVoltS, voltS }: Walk): Walk {
+  return { spent, timeS, spentS, perVoltS, voltS };
 }
 
 /** Time at which a charge is spent, on the way on from a state. */
@@ -94,7 +100,7 @@ function timeAtS(
   start: Walk,
   spent: number,
 ): number {
-  const until = { ...start };
+  const until = copyOf(start);
   walkOn(load.mean, startingC, { timeS: leftS, spent }, until);
   return until.timeS;
 }

@@ -75,7 +75,7 @@ function currentsAt(compiled: CompiledScenario, moment: PeakMoment, always: read
   const factors = groupFactors(loads.groups, moment.temperatureC, 0);
   const rest = weighGroups(loads.rest, 0, factors);
   return (intervals) => {
-    const rail = { ...rest };
+    const rail = { constantA: rest.constantA, powerW: rest.powerW, conductanceS: rest.conductanceS };
     let durationS = Infinity;
     for (const load of intervals) {
       addLoad(rail, weighGroups(loads.intervalExcess, load.offset, factors));

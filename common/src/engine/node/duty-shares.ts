@@ -25,8 +25,8 @@ export interface DutyShare {
  * @example dutyShares(program, program.routines.map(() => 1 / 900))
  */
 export function dutyShares(program: NodeProgram, ratesPerS: readonly number[]): DutyShare[] {
-  const byPart = program.parts.map(() => new Map<string, DutyShare>());
-  // Segments of one state mostly share their activity object: found by that, no key is put together.
+  const byPart = program.parts.map((): DutyShare[] => []);
+  // Segments of one state mostly share their activity object: found by that, no ids are compared.
   const byActivity = program.parts.map(() => new Map<Activity, DutyShare>());
   program.routines.forEach((routine, routineIndex) => {
     const ratePerS = ratesPerS[routineIndex] ?? 0;
@@ -34,40 +34,33 @@ export function dutyShares(program: NodeProgram, ratesPerS: readonly number[]): 
       const activities = byActivity[segment.partIndex];
       let known = activities?.get(segment.activity);
       if (!known) {
-        known = knownShare(byPart[segment.partIndex], segment, program.parts);
+        known = knownShare(byPart[segment.partIndex] ?? [], segment, program.parts);
         activities?.set(segment.activity, known);
       }
       for (const termS of segment.durationTermsS) known.share += ratePerS * termS;
     }
   });
   return program.parts.flatMap(({ partId, restStateId, restDraw }, partIndex) => {
-    const shares = [...(byPart[partIndex]?.values() ?? [])];
-    const busy = shares.reduce((sum, { share }) => sum + share, 0);
+    const shares = byPart[partIndex] ?? [];
+    let busy = 0;
+    for (const { share } of shares) busy += share;
     const share = Math.max(0, 1 - busy);
     return [{ partIndex, partId, stateId: restStateId, fromStateId: null, share, draw: restDraw }, ...shares];
   });
 }
 
 function knownShare(
-  shares: Map<string, DutyShare> | undefined,
-  segment: Segment,
+  shares: DutyShare[],
+  { partIndex, activity, draw }: Segment,
   parts: NodeProgram['parts'],
 ): DutyShare {
-  const key = keyOf(segment);
-  const known = shares?.get(key) ?? shareOf(segment, parts[segment.partIndex]?.partId ?? '');
-  shares?.set(key, known);
-  return known;
-}
-
-function keyOf({ activity }: Segment): string {
-  return activity.kind === 'state' ? activity.stateId : `${activity.fromStateId}>${activity.toStateId}`;
-}
-
-function shareOf({ partIndex, activity, draw }: Segment, partId: string): DutyShare {
-  const common = { partIndex, partId, share: 0, draw };
-  return activity.kind === 'state'
-    ? { ...common, stateId: activity.stateId, fromStateId: null }
-    : { ...common, stateId: activity.toStateId, fromStateId: activity.fromStateId };
+  const stateId = activity.kind === 'state' ? activity.stateId : activity.toStateId;
+  const fromStateId = activity.kind === 'state' ? null : activity.fromStateId;
+  for (const share of shares) if (share.stateId === stateId && share.fromStateId === fromStateId) return share;
+  const partId = parts[partIndex]?.partId ?? '';
+  const next: DutyShare = { partIndex, partId, stateId, fromStateId, share: 0, draw };
+  shares.push(next);
+  return next;
 }
 
 /** What asks for more time than there is. Empty lists: nothing. */

@@ -43,12 +43,15 @@ export function openCircuitShiftV(cell: Pick<Cell, 'openCircuitTemperatureVPerK'
  * @example freshResistanceOhm([{ pulseS: 0.1, ohm: { typical: 10 } }, { pulseS: 2, ohm: { typical: 15 } }], 0.5) // 15
  */
 export function freshResistanceOhm(figures: Cell['resistanceOhm'], durationS: number): number {
-  let best = { pulseS: -Infinity, ohm: 0 };
+  let bestS = -Infinity;
+  let bestOhm = 0;
   for (const { pulseS = Infinity, ohm } of figures) {
-    if (isNearer(pulseS, best.pulseS, durationS)) best = { pulseS, ohm: ohm.typical };
-    else if (pulseS === best.pulseS) best.ohm = Math.max(best.ohm, ohm.typical);
+    if (isNearer(pulseS, bestS, durationS)) {
+      bestS = pulseS;
+      bestOhm = ohm.typical;
+    } else if (pulseS === bestS) bestOhm = Math.max(bestOhm, ohm.typical);
   }
-  return best.ohm;
+  return bestOhm;
 }
 
 /** Whether a pulse length serves a duration better: long enough and shorter, or longer while none is long enough. */
