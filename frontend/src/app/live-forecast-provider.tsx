@@ -34,8 +34,13 @@ export function LiveForecastProvider({ serverProblems, children }: LiveForecastP
   );
 }
 
-/** The forecast at hand; a keystroke does not wait for the pictures made of it. */
+/** The forecast at hand, for the answer that a keystroke is typed for. */
 export function useForecastOnPage(): LiveForecastState {
+  return use(LiveForecastContext);
+}
+
+/** The forecast at hand for pictures that a keystroke does not wait for. */
+export function useForecastInPictures(): LiveForecastState {
   return useDeferredValue(use(LiveForecastContext));
 }
 

@@ -26,7 +26,7 @@ import { readDraft } from '#frontend/features/scenario-editor/model/draft-storag
 import { discardKept, openScenario, type KeptWork } from '#frontend/features/scenario-editor/model/opening.ts';
 import { useSession } from '#frontend/features/session/hooks/use-session.ts';
 import { ApiError } from '#frontend/lib/api-client.ts';
-import { LiveForecastProvider, useForecastOnPage } from '../live-forecast-provider.tsx';
+import { LiveForecastProvider, useForecastInPictures, useForecastOnPage } from '../live-forecast-provider.tsx';
 import { NotFoundPage } from './not-found-page.tsx';
 
 const TABS = [
@@ -189,7 +189,7 @@ function useAnswer(): ForecastAnswerProps {
 }
 
 function Details() {
-  const { forecast, scenario } = useForecastOnPage();
+  const { forecast, scenario } = useForecastInPictures();
   if (!forecast || !scenario) return null;
   return (
     <div className="mt-12">

@@ -25,7 +25,7 @@ class StubWorker extends EventTarget {
 
   answer(): void {
     const id = this.posted.at(-1)?.id ?? 0;
-    const data: ForecastReply = { id, forecast: pictureForecast(), problems: [] };
+    const data: ForecastReply = { id, forecast: pictureForecast(), problems: [], computeMs: 50 };
     this.dispatchEvent(new MessageEvent('message', { data }));
   }
 }

@@ -22,11 +22,16 @@ class FakeWorker {
     if (!request) throw new Error('Nothing was asked.');
     const problems = problem === undefined ? [] : [{ path: 'node.parts[0]', message: problem }];
     const ledger = request.withLedger ? pictureForecast().ledger : null;
-    this.reply({ id: request.id, forecast: problem === undefined ? pictureForecast({ ledger }) : null, problems });
+    this.reply({
+      id: request.id,
+      forecast: problem === undefined ? pictureForecast({ ledger }) : null,
+      problems,
+      computeMs: 1,
+    });
   }
 
   answerOld(id: number): void {
-    this.reply({ id, forecast: pictureForecast(), problems: [] });
+    this.reply({ id, forecast: pictureForecast(), problems: [], computeMs: 1 });
   }
 }
 
