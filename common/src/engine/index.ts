@@ -6,7 +6,9 @@ export type * from './forecast/forecast.types.ts';
 // link
 export { advertisingEvent, advertisingPacketS, type AdvertisingPhy } from './link/advertising-event.ts';
 export { chirpAirtimeS, isLowDataRate, type ChirpInput } from './link/chirp-airtime.ts';
+export { crystalCaution, crystalTolerance, phyLimitPpm, type CrystalTolerance } from './link/crystal.ts';
 export { frameAirtimeS, type FrameAirtimeOptions } from './link/frame-airtime.ts';
+export { guardWindow, longestResynchronisationS, type GuardInput, type GuardWindow } from './link/guard-window.ts';
 export { interframeSpaceS } from './link/interframe-space.ts';
 export { macHeader, type MacHeader, type MacHeaderInput } from './link/mac-header.ts';
 export { phyOf } from './link/phy-of.ts';
