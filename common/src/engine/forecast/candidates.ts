@@ -65,10 +65,8 @@ export function candidateLists(
   isOn: (routineIndex: number) => boolean,
   isAlways: (routineIndex: number) => boolean,
 ): CandidateLists {
-  const { intervals, rest } = context.loads;
-  const busy = { railV: 0, partIndex: -1 };
-  const atRest = { vector: rest, busy, awayMask: 0, source: null, ...electrics(context, busy, 0, Infinity) };
-  let grounds: Candidate[] = [atRest];
+  const { intervals } = context.loads;
+  let grounds: Candidate[] = [restCandidate(context)];
   const always = new Map<number, IntervalLoad[]>();
   const others: IntervalLoad[] = [];
   for (const load of intervals) {
@@ -101,15 +99,12 @@ export function routineCandidates(
   return uncovered(context, grounds, own, covers);
 }
 
-function electrics(
-  { converter, resistanceOhm, resistanceFactor, loads }: CandidateContext,
-  busy: RailLimit,
-  awayMask: number,
-  durationS: number,
-): Pick<Candidate, 'limit' | 'limitV' | 'freshOhm'> {
-  const limit = railLimit(loads.restLimitsV, busy, awayMask);
-  const freshOhm = freshResistanceOhm(resistanceOhm, durationS) * resistanceFactor;
-  return { limit, limitV: cellLimitV(converter, limit.railV), freshOhm };
+function restCandidate({ converter, resistanceOhm, resistanceFactor, loads }: CandidateContext): Candidate {
+  const busy = { railV: 0, partIndex: -1 };
+  const limit = railLimit(loads.restLimitsV, busy, 0);
+  const freshOhm = freshResistanceOhm(resistanceOhm, Infinity) * resistanceFactor;
+  const limitV = cellLimitV(converter, limit.railV);
+  return { vector: loads.rest, limit, busy, awayMask: 0, limitV, freshOhm, source: null };
 }
 
 type Covers = (strong: Candidate, weak: Candidate) => boolean;
@@ -121,21 +116,38 @@ function uncovered(
   loads: readonly IntervalLoad[],
   isCovered: Covers,
 ): Candidate[] {
-  const { width, intervalExcess } = context.loads;
   const kept: Candidate[] = [];
-  let vector = new Float64Array(width);
+  // Most are covered at once, so one object serves until it is kept.
+  let next: Candidate | null = null;
   for (const load of loads) {
     for (const ground of grounds) {
-      for (let at = 0; at < width; at++) {
-        vector[at] = (ground.vector[at] ?? 0) + (intervalExcess[load.offset + at] ?? 0);
-      }
-      const busy = ground.busy.railV > load.busy.railV ? ground.busy : load.busy;
-      const awayMask = ground.awayMask | load.awayMask;
-      const figures = electrics(context, busy, awayMask, load.interval.durationS);
-      if (keep(kept, { vector, busy, awayMask, source: load, ...figures }, isCovered)) vector = new Float64Array(width);
+      next ??= blank(context);
+      putOn(context, ground, load, next);
+      if (keep(kept, next, isCovered)) next = null;
     }
   }
   return kept;
+}
+
+function blank({ loads }: CandidateContext): Candidate {
+  const busy = { railV: 0, partIndex: -1 };
+  const vector = new Float64Array(loads.width);
+  return { vector, limit: busy, busy, awayMask: 0, limitV: 0, freshOhm: 0, source: null };
+}
+
+/** Makes a candidate what a ground with an interval on top is. */
+function putOn(context: CandidateContext, ground: Candidate, load: IntervalLoad, candidate: Candidate): void {
+  const { loads, converter, resistanceOhm, resistanceFactor } = context;
+  const { vector } = candidate;
+  for (let at = 0; at < vector.length; at++) {
+    vector[at] = (ground.vector[at] ?? 0) + (loads.intervalExcess[load.offset + at] ?? 0);
+  }
+  candidate.busy = ground.busy.railV > load.busy.railV ? ground.busy : load.busy;
+  candidate.awayMask = ground.awayMask | load.awayMask;
+  candidate.limit = railLimit(loads.restLimitsV, candidate.busy, candidate.awayMask);
+  candidate.limitV = cellLimitV(converter, candidate.limit.railV);
+  candidate.freshOhm = freshResistanceOhm(resistanceOhm, load.interval.durationS) * resistanceFactor;
+  candidate.source = load;
 }
 
 /** Adds a candidate unless one that is there covers it, and drops those that it covers; the order of the others is kept. */

@@ -22,6 +22,17 @@ import type { SourceTables } from './source-tables.ts';
 /** Reference voltage of states that give none, where nothing regulates the rail, V. */
 const UNREGULATED_V = 3;
 
+/** Routines that are on in the same dekads, and what follows from that alone. */
+export interface Pattern {
+  /** Whether each routine is on. */
+  isOn: boolean[];
+  lists: CandidateLists;
+  /** Cycles per second by routine while it is on, otherwise 0. */
+  ratesPerS: Float64Array;
+  /** Mean load on the rail, the monitor's readings included. */
+  meanVector: Float64Array;
+}
+
 /** A scenario made ready for forecasts: nothing in it depends on the charge that the pack starts with. */
 export interface CompiledScenario {
   scenario: Scenario;
@@ -42,8 +53,8 @@ export interface CompiledScenario {
   monitorA: number;
   /** Routine indices of `once` routines with their time, s, in the order of time. */
   onceEvents: { timeS: number; routineIndex: number }[];
-  /** Whether each routine is on, by calendar dekad, and the candidates of each such pattern. */
-  onByDekad: { isOn: boolean[]; lists: CandidateLists }[];
+  /** What is on, by calendar dekad. */
+  onByDekad: Pattern[];
   /** What a dekad of the year, 0 to 35, brings; made when it is first asked for. */
   dekadLoad: (dekadOfYear: number) => DekadLoad;
 }
@@ -71,6 +82,11 @@ export function compileScenario(scenario: Scenario): CompiledScenario {
     resistanceFactor: pack.resistanceFactor,
   };
   const calendar = dekadsOfYear(climate);
+  const ratesPerS = Float64Array.from(
+    program.routines,
+    ({ schedule, cycleS }) => cyclesPerDay(schedule, cycleS) / DAY_S,
+  );
+  const monitorA = lowBattery ? ((lowBattery.chargePerReadingC ?? 0) * (lowBattery.readingsPerDay ?? 1)) / DAY_S : 0;
   const known: DekadLoad[] = [];
   const compiled: CompiledScenario = {
     scenario,
@@ -83,10 +99,10 @@ export function compileScenario(scenario: Scenario): CompiledScenario {
     calendar,
     startDekad: 3 * (climate.startMonth - 1),
     winterStart: winterStartMonth(climate.months),
-    ratesPerS: Float64Array.from(program.routines, ({ schedule, cycleS }) => cyclesPerDay(schedule, cycleS) / DAY_S),
-    monitorA: lowBattery ? ((lowBattery.chargePerReadingC ?? 0) * (lowBattery.readingsPerDay ?? 1)) / DAY_S : 0,
+    ratesPerS,
+    monitorA,
     onceEvents: onceEvents(program),
-    onByDekad: onByDekad(program, calendar, candidateContext),
+    onByDekad: onByDekad(program, calendar, candidateContext, { ratesPerS, monitorA }),
     dekadLoad: (dekadOfYear) => (known[dekadOfYear] ??= makeDekadLoad(compiled, dekadOfYear)),
   };
   return compiled;
@@ -100,22 +116,39 @@ function onceEvents(program: NodeProgram): CompiledScenario['onceEvents'] {
     .sort((a, b) => a.timeS - b.timeS);
 }
 
-/** Most years know one or two patterns of routines that are on, so their candidates are listed once for each. */
+/** Most years know one or two patterns of routines that are on, so what follows from them is made once for each. */
 function onByDekad(
   { routines }: NodeProgram,
   calendar: readonly CalendarDekad[],
   context: CandidateContext,
-): CompiledScenario['onByDekad'] {
-  const known = new Map<string, CompiledScenario['onByDekad'][number]>();
+  draws: Pick<CompiledScenario, 'ratesPerS' | 'monitorA'>,
+): Pattern[] {
+  const known: Pattern[] = [];
   const isAlways = (index: number): boolean => routines[index]?.schedule.kind === 'always';
   return calendar.map(({ month, meanC }) => {
     const isOn = routines.map(({ schedule: { when } }) => isOnInMonth(when, month) && isOnAt(when, meanC));
-    const key = isOn.map(Number).join('');
-    const found = known.get(key);
+    const found = known.find((pattern) => pattern.isOn.every((on, index) => on === isOn[index]));
     if (found) return found;
     const isCase = (index: number): boolean => isOn[index] === true && routines[index]?.schedule.kind !== 'once';
-    const pattern = { isOn, lists: candidateLists(context, isCase, isAlways) };
-    known.set(key, pattern);
+    const ratesPerS = draws.ratesPerS.map((ratePerS, index) => (isOn[index] === true ? ratePerS : 0));
+    const pattern: Pattern = {
+      isOn,
+      lists: candidateLists(context, isCase, isAlways),
+      ratesPerS,
+      meanVector: meanVector(context.loads, ratesPerS, draws.monitorA),
+    };
+    known.push(pattern);
     return pattern;
   });
+}
+
+function meanVector({ rest, width, cycleExcess }: NodeLoads, ratesPerS: Float64Array, monitorA: number): Float64Array {
+  const mean = new Float64Array(rest);
+  mean[0] = (mean[0] ?? 0) + monitorA;
+  ratesPerS.forEach((ratePerS, routineIndex) => {
+    if (ratePerS === 0) return;
+    const offset = routineIndex * width;
+    for (let at = 0; at < width; at++) mean[at] = (mean[at] ?? 0) + ratePerS * (cycleExcess[offset + at] ?? 0);
+  });
+  return mean;
 }

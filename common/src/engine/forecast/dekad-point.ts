@@ -10,8 +10,10 @@ export interface PointState {
   spent: number;
   timeS: number;
   least: LeastHeadroom | null;
-  /** Charge drawn and lost since the last point, C, in how much time, s. */
-  mean: { drawnC: number; lostC: number; timeS: number };
+  /** Charge drawn and lost since the last point, C, and how long ago that was, s. */
+  drawnC: number;
+  lostC: number;
+  sinceS: number;
 }
 
 /**
@@ -27,12 +29,12 @@ export interface PointState {
 export function dekadPoint(
   compiled: CompiledScenario,
   load: DekadLoad,
-  { startingC, spent, timeS, least, mean }: PointState,
+  { startingC, spent, timeS, least, drawnC, lostC, sinceS }: PointState,
 ): DekadPoint {
   const { month, dekadOfYear, meanC, coldestC } = load.dekad;
   const openCircuitV = meanOpenCircuitV(compiled, load, spent);
   const remainingC = startingC * Math.max(0, 1 - spent);
-  const hasTime = mean.timeS > 0;
+  const hasTime = sinceS > 0;
   return {
     timeS,
     month,
@@ -44,7 +46,7 @@ export function dekadPoint(
     headroomV: least?.headroomV ?? openCircuitV,
     meanC,
     coldestC,
-    currentA: hasTime ? mean.drawnC / mean.timeS : loadCurrentA(load.mean.load, compiled.converter.sight, openCircuitV),
-    selfDischargeA: hasTime ? mean.lostC / mean.timeS : load.mean.selfDischargePerS * remainingC,
+    currentA: hasTime ? drawnC / sinceS : loadCurrentA(load.mean.load, compiled.converter.sight, openCircuitV),
+    selfDischargeA: hasTime ? lostC / sinceS : load.mean.selfDischargePerS * remainingC,
   };
 }

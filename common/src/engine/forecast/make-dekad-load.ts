@@ -20,53 +20,43 @@ const FASTEST_LOSS_PER_S = 1e6;
  * @example makeDekadLoad(compiled, 0).cold.cases.length
  */
 export function makeDekadLoad(compiled: CompiledScenario, dekadOfYear: number): DekadLoad {
-  const { calendar, onByDekad, loads, scenario, pack, ratesPerS } = compiled;
+  const { calendar, onByDekad, loads, scenario, pack } = compiled;
   const dekad = calendar[dekadOfYear];
   const pattern = onByDekad[dekadOfYear];
   if (!dekad || !pattern) throw new RangeError(`There is no dekad ${dekadOfYear} in a year.`);
   const { cell } = scenario.supply;
-  const rates = ratesPerS.map((ratePerS, index) => (pattern.isOn[index] === true ? ratePerS : 0));
   const meanFactors = groupFactors(loads.groups, dekad.meanC, dekad.amplitudeK);
   const capacityFactor = capacityTemperatureFactor(cell.capacityFactorByTemperature, dekad.meanC);
   const shiftV = pack.openCircuitFactor * openCircuitShiftV(cell, dekad.meanC);
   return {
     dekad,
-    ratesPerS: rates,
+    ratesPerS: pattern.ratesPerS,
     meanFactors,
     capacityFactor,
     openCircuitShiftV: shiftV,
-    mean: meanLoad(compiled, { rates, meanFactors, capacityFactor, shiftV, dekad }),
+    mean: meanLoad(compiled, { vector: pattern.meanVector, meanFactors, capacityFactor, shiftV, dekad }),
     lists: pattern.lists,
     cold: testConditions(compiled, pattern.lists, dekad.coldestC),
   };
 }
 
 function meanLoad(
-  { loads, monitorA, converter, scenario, source }: CompiledScenario,
-  given: { rates: Float64Array; meanFactors: number[]; capacityFactor: number; shiftV: number } & Pick<
+  { converter, scenario, source }: CompiledScenario,
+  given: { vector: Float64Array; meanFactors: number[]; capacityFactor: number; shiftV: number } & Pick<
     DekadLoad,
     'dekad'
   >,
 ): MeanLoad {
   const { lossPerYear, referenceC, q10, activationEnergyJPerMol } = scenario.supply.cell.selfDischarge;
   const { meanC, amplitudeK } = given.dekad;
-  const mean = new Float64Array(loads.rest);
-  mean[0] = (mean[0] ?? 0) + monitorA;
-  given.rates.forEach((ratePerS, routineIndex) => {
-    if (ratePerS === 0) return;
-    const offset = routineIndex * loads.width;
-    for (let at = 0; at < mean.length; at++) {
-      mean[at] = (mean[at] ?? 0) + ratePerS * (loads.cycleExcess[offset + at] ?? 0);
-    }
-  });
-  const load = cellLoad(converter, weighGroups(mean, 0, given.meanFactors));
-  const temperature = { temperatureC: meanC, amplitudeK };
+  const load = cellLoad(converter, weighGroups(given.vector, 0, given.meanFactors));
   const ratePerS = selfDischargeRatePerS({
     lossPerYear: lossPerYear.typical,
     referenceC,
     q10,
     activationEnergyJPerMol,
-    ...temperature,
+    temperatureC: meanC,
+    amplitudeK,
   });
   return {
     load,

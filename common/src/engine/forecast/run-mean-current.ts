@@ -50,13 +50,22 @@ export function runMeanCurrent(compiled: CompiledScenario): Run {
   for (let dekadOfLife = 0; ; dekadOfLife++) {
     const load = compiled.dekadLoad((startDekad + dekadOfLife) % DEKADS);
     const fromS = life.walk.timeS;
-    const before = drawnSums(life, load);
+    const drawnBeforeC = drawnC(life, load);
+    const lostBeforeC = lostC(life, load);
     const failure = startingC > 0 ? passDekad(life, load, Math.min((dekadOfLife + 1) * DEKAD_S, lastS)) : EMPTY;
     const { spent, timeS } = life.walk;
     const least = criticalAt(life, load, failure);
-    const sums = drawnSums(life, load);
-    const mean = { drawnC: sums.drawnC - before.drawnC, lostC: sums.lostC - before.lostC, timeS: timeS - fromS };
-    points.push(dekadPoint(compiled, load, { startingC, spent, timeS, least, mean }));
+    points.push(
+      dekadPoint(compiled, load, {
+        startingC,
+        spent,
+        timeS,
+        least,
+        drawnC: drawnC(life, load) - drawnBeforeC,
+        lostC: lostC(life, load) - lostBeforeC,
+        sinceS: timeS - fromS,
+      }),
+    );
     if (!failure && timeS < lastS) continue;
     return {
       outcome: failure ? failedAs(failure, timeS) : shelfS <= HORIZON_S ? 'shelf-life' : 'outlives-horizon',
@@ -111,7 +120,11 @@ function passStretch(
   const range = { fromSpent: spent, toSpent: Math.max(spent, walk.spent) };
   const failure = firstFailure(compiled.source, load.cold, compiled.converter.sight, range);
   if (failure) {
-    Object.assign(walk, { spent, timeS, spentS, perVoltS, voltS });
+    walk.spent = spent;
+    walk.timeS = timeS;
+    walk.spentS = spentS;
+    walk.perVoltS = perVoltS;
+    walk.voltS = voltS;
     walkOn(load.mean, startingC, { timeS: endS - timeS, spent: failure.spent }, walk);
     walk.spent = failure.spent;
   }
@@ -151,18 +164,20 @@ function criticalAt({ compiled, walk }: Life, load: DekadLoad, failure: Failure 
   return leastHeadroom(source, conditions, converter, walk.spent);
 }
 
-/** Charge drawn and lost so far in a calendar dekad, C. */
-function drawnSums({ usage, startingC }: Life, load: DekadLoad): { drawnC: number; lostC: number } {
-  const { constantA, powerW, conductanceS } = load.mean.load;
-  const dekad = load.dekad.dekadOfYear;
+/** Charge drawn so far in a calendar dekad, C. */
+function drawnC({ usage }: Life, { dekad: { dekadOfYear }, mean }: DekadLoad): number {
+  const { constantA, powerW, conductanceS } = mean.load;
   let onceC = 0;
-  for (const { dekadOfYear, chargeC } of usage.once) if (dekadOfYear === dekad) onceC += chargeC;
-  return {
-    drawnC:
-      onceC +
-      constantA * (usage.timeS[dekad] ?? 0) +
-      powerW * (usage.perVoltS[dekad] ?? 0) +
-      conductanceS * (usage.voltS[dekad] ?? 0),
-    lostC: load.mean.selfDischargePerS * startingC * (usage.leftS[dekad] ?? 0),
-  };
+  for (const event of usage.once) if (event.dekadOfYear === dekadOfYear) onceC += event.chargeC;
+  return (
+    onceC +
+    constantA * (usage.timeS[dekadOfYear] ?? 0) +
+    powerW * (usage.perVoltS[dekadOfYear] ?? 0) +
+    conductanceS * (usage.voltS[dekadOfYear] ?? 0)
+  );
+}
+
+/** Charge lost to self-discharge so far in a calendar dekad, C. */
+function lostC({ usage, startingC }: Life, { dekad: { dekadOfYear }, mean }: DekadLoad): number {
+  return mean.selfDischargePerS * startingC * (usage.leftS[dekadOfYear] ?? 0);
 }

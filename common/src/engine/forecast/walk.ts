@@ -34,7 +34,7 @@ const MOST_NEWTON_STEPS = 50;
  * @example walkOn(mean, 1000, { timeS: 876_600, spent: Infinity }, walk)
  */
 export function walkOn(mean: MeanLoad, startingC: number, until: { timeS: number; spent: number }, walk: Walk): void {
-  const step = { mean, startingC, targetSpent: 0, leftS: until.timeS };
+  const step: Step = { mean, startingC, targetSpent: 0, leftS: until.timeS };
   const endS = walk.timeS + until.timeS;
   for (const piece of mean.pieces) {
     if (walk.spent >= piece.toSpent) continue;
@@ -101,23 +101,14 @@ function quadratureStep(step: Step, piece: MeanPiece, walk: Walk): number {
   const from = walk.spent;
   const { targetSpent, leftS } = step;
   const fromSpeed = speedAt(step, piece, from);
+  const sums: Integrals = { timeS: 0, spentS: 0, perVoltS: 0, voltS: 0 };
   let to = targetSpent;
-  let sums: Integrals | null = null;
   // The speed is convex in the charge, so its larger end bounds it: often the piece's end is clearly out of reach.
-  if (Math.max(fromSpeed, speedAt(step, piece, targetSpent)) * leftS >= targetSpent - from) {
-    sums = integrals(step, piece, from, targetSpent);
-  }
-  if (sums === null || sums.timeS > leftS) {
-    to = from;
-    sums = { timeS: 0, spentS: 0, perVoltS: 0, voltS: 0 };
-    let guess = from + leftS * speedAt(step, piece, Math.min(targetSpent, from + (leftS / 2) * fromSpeed));
-    for (let round = 0; round < MOST_NEWTON_STEPS; round++) {
-      to = Math.min(Math.max(guess, from), targetSpent);
-      sums = integrals(step, piece, from, to);
-      guess = to + (leftS - sums.timeS) * speedAt(step, piece, to);
-      if (Math.abs(guess - to) <= 1e-13 * (to - from) + Number.EPSILON * to) break;
-    }
-    sums.timeS = leftS;
+  const isInReach = Math.max(fromSpeed, speedAt(step, piece, targetSpent)) * leftS >= targetSpent - from;
+  if (isInReach) integrate(step, piece, { from, to }, sums);
+  if (!isInReach || sums.timeS > leftS) {
+    const guess = from + leftS * speedAt(step, piece, Math.min(targetSpent, from + (leftS / 2) * fromSpeed));
+    to = integrateFor(step, piece, { from, to: guess }, sums);
   }
   walk.spent = to;
   walk.timeS += sums.timeS;
@@ -127,10 +118,32 @@ function quadratureStep(step: Step, piece: MeanPiece, walk: Walk): number {
   return sums.timeS;
 }
 
-function integrals(step: Step, piece: MeanPiece, from: number, to: number): Integrals {
-  const sums: Integrals = { timeS: 0, spentS: 0, perVoltS: 0, voltS: 0 };
+/** Integrates up to the charge that is spent when the step's time is over, and returns that charge. */
+function integrateFor(
+  step: Step,
+  piece: MeanPiece,
+  { from, to: guess }: { from: number; to: number },
+  sums: Integrals,
+): number {
+  const { targetSpent, leftS } = step;
+  let to = from;
+  let next = guess;
+  for (let round = 0; round < MOST_NEWTON_STEPS; round++) {
+    to = Math.min(Math.max(next, from), targetSpent);
+    integrate(step, piece, { from, to }, sums);
+    next = to + (leftS - sums.timeS) * speedAt(step, piece, to);
+    if (Math.abs(next - to) <= 1e-13 * (to - from) + Number.EPSILON * to) break;
+  }
+  sums.timeS = leftS;
+  return to;
+}
+
+function integrate(step: Step, piece: MeanPiece, { from, to }: { from: number; to: number }, sums: Integrals): void {
+  sums.timeS = 0;
+  sums.spentS = 0;
+  sums.perVoltS = 0;
+  sums.voltS = 0;
   addIntegrals(step, piece, { from, to, halvings: 0 }, sums);
-  return sums;
 }
 
 function addIntegrals(
@@ -140,13 +153,12 @@ function addIntegrals(
   sums: Integrals,
 ): void {
   const { from, to, halvings } = range;
+  const middle = (from + to) / 2;
   if (halvings < MOST_HALVINGS && isRough(step, piece, from, to)) {
-    const middle = (from + to) / 2;
     addIntegrals(step, piece, { from, to: middle, halvings: halvings + 1 }, sums);
     addIntegrals(step, piece, { from: middle, to, halvings: halvings + 1 }, sums);
     return;
   }
-  const middle = (from + to) / 2;
   const half = (to - from) / 2;
   for (let node = 0; node < NODES.length; node++) {
     const away = half * (NODES[node] ?? 0);
