@@ -69,7 +69,8 @@ const POSTGRES = {
 };
 const CHROMIUM = {
   title: 'Chromium',
-  packages: ['chromium', 'fonts-dejavu-core'],
+  // Chromium without the parts that draw a window: the tests take a third less time than in the whole program.
+  packages: ['chromium-headless-shell', 'fonts-dejavu-core'],
   otherwise: 'Or set CHROMIUM_PATH to a Chromium that is there already.',
 };
 
@@ -80,7 +81,7 @@ export function ensureTestPrograms() {
     ...(hasServer ? [] : [{ ...POSTGRES, otherwise: POSTGRES.otherwise.replace('DATABASE', 'TEST_DATABASE') }]),
     ...(chromiumPath() === undefined ? [CHROMIUM] : []),
   ];
-  if (missing.length === 0) return;
+  if (missing.length === 0) return tryForShell();
   install(
     missing.flatMap(({ packages }) => packages),
     missing.map(({ title }) => title).join(' and '),
@@ -109,8 +110,25 @@ export function ensurePostgres(major) {
 }
 
 /** @returns {string | undefined} */
+function shellPath() {
+  return process.env['CHROMIUM_PATH'] ?? onPath('chromium-headless-shell');
+}
+
+/** @returns {string | undefined} */
 function chromiumPath() {
-  return process.env['CHROMIUM_PATH'] ?? onPath('chromium') ?? onPath('chromium-browser');
+  return shellPath() ?? onPath('chromium') ?? onPath('chromium-browser');
+}
+
+/** Where the whole program is there already, the lighter one is worth a try, not a failure. */
+function tryForShell() {
+  if (shellPath() !== undefined || process.getuid?.() !== 0 || onPath('apt-get') === undefined) return;
+  const options = ['-q', '-o', 'Acquire::Retries=0', '-o', 'Acquire::http::Timeout=10', '-o', 'DPkg::Lock::Timeout=60'];
+  const install = ['install', '-y', '--no-install-recommends', 'chromium-headless-shell'];
+  say('Fetching the lighter build of Chromium from Debian (once) …');
+  for (const args of [['update'], install]) {
+    const env = { ...process.env, DEBIAN_FRONTEND: 'noninteractive' };
+    spawnSync('apt-get', [...options, ...args], { stdio: 'ignore', cwd: '/', timeout: 60_000, env });
+  }
 }
 
 /**
@@ -123,6 +141,7 @@ export function ensureChromium() {
   if (present !== undefined) return present;
   install(CHROMIUM.packages, CHROMIUM.title, CHROMIUM.otherwise);
   const installed = chromiumPath();
-  if (installed === undefined) throw new UserError('Chromium was installed, yet no `chromium` is on the PATH.');
+  if (installed === undefined)
+    throw new UserError('Chromium was installed, yet no `chromium-headless-shell` is on the PATH.');
   return installed;
 }

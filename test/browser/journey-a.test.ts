@@ -1,6 +1,6 @@
 import type { Page } from 'playwright-core';
 import { afterAll, beforeAll, describe, expect, it } from 'vitest';
-import { DEMO_PROJECT, startDemoWorld, startEmptyWorld, type World } from '#test/support/journey-world.ts';
+import { DEMO_PROJECT, PASSWORD, startDemoWorld, startEmptyWorld, type World } from '#test/support/journey-world.ts';
 import {
   addCataloguePart,
   answer,
@@ -14,6 +14,7 @@ import {
   take,
   type,
 } from '#test/support/pages-scenario.ts';
+import { signIn } from '#test/support/pages-session.ts';
 
 const PROJECT = 'Hedge node';
 
@@ -26,7 +27,8 @@ describe.each([
 
   beforeAll(async () => {
     world = await start();
-    page = await world.signedIn();
+    page = (await world.open()).page;
+    await signIn(page, { email: world.email, password: PASSWORD });
     if (where === 'an empty workspace') await makeProject(page, PROJECT);
   });
   afterAll(async () => {

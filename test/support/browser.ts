@@ -1,9 +1,8 @@
 import axe from 'axe-core';
-import { mkdir, mkdtemp, rm } from 'node:fs/promises';
-import { tmpdir } from 'node:os';
+import { mkdir } from 'node:fs/promises';
 import path from 'node:path';
 import { fileURLToPath } from 'node:url';
-import { chromium, type BrowserContext, type Page } from 'playwright-core';
+import { chromium, type Browser, type BrowserContext, type Page } from 'playwright-core';
 import { ensureChromium } from '#scripts/debian.js';
 
 const FLAGS = [
@@ -41,13 +40,29 @@ export interface BrowserOptions {
   colorScheme?: 'light' | 'dark';
 }
 
-/** Debian's Chromium with an empty profile of its own; the time zone and language are fixed. */
+/** One Chromium for the test file that runs in this process; it ends with its last window. */
+let shared: { browser: Promise<Browser>; windows: number } | null = null;
+
+function takeShared(): Promise<Browser> {
+  shared ??= {
+    browser: chromium.launch({ executablePath: ensureChromium(), headless: true, args: FLAGS }),
+    windows: 0,
+  };
+  shared.windows += 1;
+  return shared.browser;
+}
+
+async function giveBack(): Promise<void> {
+  if (!shared || --shared.windows > 0) return;
+  const { browser } = shared;
+  shared = null;
+  await (await browser).close();
+}
+
+/** A window of Debian's Chromium with cookies and storage of its own; the time zone and language are fixed. */
 export async function openBrowser(options: BrowserOptions): Promise<TestBrowser> {
-  const profile = await mkdtemp(path.join(tmpdir(), 'overwinter-browser-'));
-  const context = await chromium.launchPersistentContext(profile, {
-    executablePath: ensureChromium(),
-    headless: true,
-    args: FLAGS,
+  const browser = await takeShared();
+  const context = await browser.newContext({
     baseURL: options.origin,
     viewport: SCREENS[options.screen ?? 'laptop'],
     colorScheme: options.colorScheme ?? 'light',
@@ -56,23 +71,24 @@ export async function openBrowser(options: BrowserOptions): Promise<TestBrowser>
     timezoneId: 'UTC',
   });
   const errors: string[] = [];
-  const listen = (page: Page): void => {
+  context.on('page', (page) => {
     page.on('pageerror', (error) => errors.push(error.message));
     page.on('console', (message) => {
       if (message.type() === 'error') errors.push(message.text());
     });
-  };
-  context.on('page', listen);
-  const page = context.pages()[0] ?? (await context.newPage());
-  listen(page);
+  });
+  const page = await context.newPage();
   page.setDefaultTimeout(30_000);
+  let isOpen = true;
   return {
     context,
     page,
     errors,
     close: async () => {
+      if (!isOpen) return;
+      isOpen = false;
       await context.close();
-      await rm(profile, { recursive: true, force: true, maxRetries: 5 });
+      await giveBack();
     },
   };
 }

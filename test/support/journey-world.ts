@@ -2,7 +2,7 @@ import type { Page } from 'playwright-core';
 import { openBrowser, type BrowserOptions, type TestBrowser } from './browser.ts';
 import { startBuiltServer } from './built-server.ts';
 import { createTestDatabase } from './database.ts';
-import { makeFirstOwner, signIn } from './pages-session.ts';
+import { makeFirstOwner, signInQuietly } from './pages-session.ts';
 
 /** Password of every account that these tests use. */
 export const PASSWORD = 'orchards under snow';
@@ -16,7 +16,7 @@ export interface World {
   email: string;
   /** A browser of its own, at no page yet. */
   open: (options?: Omit<BrowserOptions, 'origin'>) => Promise<TestBrowser>;
-  /** A browser of its own, signed in through the page, at the projects. */
+  /** A browser of its own, signed in, at the projects. */
   signedIn: (email?: string, options?: Omit<BrowserOptions, 'origin'>) => Promise<Page>;
   /** Errors of scripts and of the console in all browsers so far. */
   errors: () => string[];
@@ -73,7 +73,7 @@ async function startWorld({ demoPassword, email }: { demoPassword?: string; emai
     open,
     signedIn: async (as = email, options = {}) => {
       const { page } = await open(options);
-      await signIn(page, { email: as, password: PASSWORD });
+      await signInQuietly(page, { email: as, password: PASSWORD });
       return page;
     },
     errors: () => browsers.flatMap(({ errors }) => errors),

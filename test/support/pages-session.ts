@@ -14,6 +14,17 @@ export async function signIn(page: Page, { email, password }: Account): Promise<
   await page.getByRole('heading', { level: 1, name: /^Projects of/ }).waitFor();
 }
 
+/** Signs a window in without its page, for tests about something else, and opens the projects. */
+export async function signInQuietly(page: Page, account: Account): Promise<void> {
+  const { request } = page.context();
+  const { csrfToken } = await (await request.get('/api/v1/session')).json();
+  const headers = { 'X-CSRF-Token': String(csrfToken) };
+  const response = await request.post('/api/v1/session', { data: account, headers });
+  if (!response.ok()) throw new Error(`The sign-in answered ${response.status()}.`);
+  await page.goto('/projects');
+  await page.getByRole('heading', { level: 1, name: /^Projects of/ }).waitFor();
+}
+
 /** Opens the printed link, fills the form and waits for the projects of the new workspace. */
 export async function makeFirstOwner(
   page: Page,

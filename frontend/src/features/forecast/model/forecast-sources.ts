@@ -13,7 +13,7 @@ export const openOnThisThread: OpenForecastSource = (onReply) => {
 };
 
 /** Longest computation that may stand between a keystroke and its frame, ms. */
-const QUICK_MS = 6;
+const QUICK_MS = 12;
 
 /**
  * Answers in place while that takes next to no time, so that the frame of a keystroke already shows the new answer, and in the
