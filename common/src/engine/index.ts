@@ -7,6 +7,7 @@ export type * from './forecast/forecast.types.ts';
 export { advertisingEvent, advertisingPacketS, type AdvertisingPhy } from './link/advertising-event.ts';
 export { chirpAirtimeS, isLowDataRate, type ChirpInput } from './link/chirp-airtime.ts';
 export { crystalCaution, crystalTolerance, phyLimitPpm, type CrystalTolerance } from './link/crystal.ts';
+export { csmaCa, type BackoffSettings, type CsmaCa, type CsmaCaInput } from './link/csma-ca.ts';
 export { frameAirtimeS, type FrameAirtimeOptions } from './link/frame-airtime.ts';
 export { guardWindow, longestResynchronisationS, type GuardInput, type GuardWindow } from './link/guard-window.ts';
 export { interframeSpaceS } from './link/interframe-space.ts';
@@ -16,6 +17,14 @@ export { phyPresets } from './link/phy.table.ts';
 export type { Phy, PhyConstant } from './link/phy.types.ts';
 export { serialTransferS } from './link/serial-transfer.ts';
 export { stepDuration, type StepDuration } from './link/step-duration.ts';
+export {
+  beaconTracking,
+  superframe,
+  type BeaconTracking,
+  type BeaconTrackingInput,
+  type Superframe,
+  type SuperframeInput,
+} from './link/superframe.ts';
 // node
 export { chargeLedger, exactDrawAt, type ChargeLedgerOptions } from './node/charge-ledger.ts';
 export { compileNode } from './node/compile-node.ts';
