@@ -16,6 +16,9 @@ export { phyOf } from './link/phy-of.ts';
 export { phyPresets } from './link/phy.table.ts';
 export type { Phy, PhyConstant } from './link/phy.types.ts';
 export { serialTransferS } from './link/serial-transfer.ts';
+export { sharedSlots, type SharedSlots, type SharedSlotsInput } from './link/shared-slots.ts';
+export { SLOT_TEMPLATE_CONFLICT, slotTemplates, type SlotTemplate } from './link/slot-templates.table.ts';
+export { slot, slotTemplateOf, type Slot, type SlotInput, type SlotTimes } from './link/slot.ts';
 export { stepDuration, type StepDuration } from './link/step-duration.ts';
 export {
   beaconTracking,
