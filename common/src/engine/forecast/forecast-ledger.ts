@@ -121,7 +121,7 @@ function drawC(
   const { groups } = compiled.loads;
   const group = groupOf(groups, draw);
   const unit = new Float64Array(GROUP_WIDTH);
-  addDraw(unit, 0, { draw, group: 0 }, 1);
+  addDraw(unit, 0, draw, 1);
   const load = converted(compiled.converter, weighGroups(unit, 0, ONE_GROUP));
   let chargeC = 0;
   for (let dekad = 0; dekad < DEKADS; dekad++) {
@@ -141,7 +141,7 @@ const ONE_GROUP = [1];
 /** Current at the cell of a draw at the moment of a routine that runs once, A. */
 function onceA(compiled: CompiledScenario, { dekadOfYear, seenV }: OnceEvent, draw: Draw): number {
   const unit = new Float64Array(GROUP_WIDTH);
-  addDraw(unit, 0, { draw, group: 0 }, 1);
+  addDraw(unit, 0, draw, 1);
   const { constantA, powerW, conductanceS } = converted(compiled.converter, weighGroups(unit, 0, ONE_GROUP));
   const factor = compiled.dekadLoad(dekadOfYear).meanFactors[groupOf(compiled.loads.groups, draw)] ?? 1;
   return factor * (constantA + powerW / seenV + conductanceS * seenV);

@@ -55,21 +55,27 @@ export function groupOf(groups: readonly TemperatureGroup[], draw: Draw): number
 }
 
 /**
+ * Where a draw's group begins in a load vector.
+ *
+ * @param groups Groups, the first being no dependence.
+ * @param draw The draw.
+ * @returns Index of its first number.
+ * @example placeOf(groups, draw)
+ */
+export function placeOf(groups: readonly TemperatureGroup[], draw: Draw): number {
+  return GROUP_WIDTH * groupOf(groups, draw);
+}
+
+/**
  * Adds a draw, times a weight, to a load vector.
  *
  * @param vector The vector, changed in place.
- * @param offset Where it begins.
- * @param draw The draw and its group.
+ * @param at Where the draw's group begins in it.
+ * @param draw The draw.
  * @param weight Weight: 1, −1, or a time in s.
- * @example addDraw(vector, 0, { draw, group: 0 }, 1)
+ * @example addDraw(vector, placeOf(groups, draw), draw, 1)
  */
-export function addDraw(
-  vector: Float64Array,
-  offset: number,
-  { draw, group }: { draw: Draw; group: number },
-  weight: number,
-): void {
-  const at = offset + GROUP_WIDTH * group;
+export function addDraw(vector: Float64Array, at: number, draw: Draw, weight: number): void {
   const { law, currentA, referenceVoltageV } = draw;
   if (law === 'constant-current') vector[at] = (vector[at] ?? 0) + weight * currentA;
   else if (law === 'constant-power') vector[at + 1] = (vector[at + 1] ?? 0) + weight * currentA * referenceVoltageV;

@@ -1,5 +1,5 @@
 import type { Interval, NodeProgram } from '../node/node-program.types.ts';
-import { addDraw, groupOf, GROUP_WIDTH, temperatureGroups } from './load-vector.ts';
+import { addDraw, GROUP_WIDTH, placeOf, temperatureGroups } from './load-vector.ts';
 import type { TemperatureGroup } from './load-vector.ts';
 
 /** What a node draws, as load vectors: rest with leakages, each routine's cycle and each interval in excess of rest. */
@@ -47,7 +47,7 @@ export function nodeLoads(program: NodeProgram): NodeLoads {
   const width = groups.length * GROUP_WIDTH;
   const rest = new Float64Array(width);
   const draws = [...program.parts.map(({ restDraw }) => restDraw), ...program.leakages.map(({ draw }) => draw)];
-  for (const draw of draws) addDraw(rest, 0, { draw, group: groupOf(groups, draw) }, 1);
+  for (const draw of draws) addDraw(rest, placeOf(groups, draw), draw, 1);
   const restLimitsV = program.parts.map(({ restLowestVoltageV }) => restLowestVoltageV);
   const loads = { groups, width, rest, restLimitsV };
   return { ...loads, cycleExcess: cycleExcess(program, loads), ...intervalLoads(program, loads) };
@@ -60,9 +60,9 @@ function cycleExcess(program: NodeProgram, { groups, width }: Pick<NodeLoads, 'g
     for (const { draw, durationTermsS, partIndex } of segments) {
       let durationS = 0;
       for (const termS of durationTermsS) durationS += termS;
-      addDraw(vectors, offset, { draw, group: groupOf(groups, draw) }, durationS);
+      addDraw(vectors, offset + placeOf(groups, draw), draw, durationS);
       const restDraw = program.parts[partIndex]?.restDraw;
-      if (restDraw) addDraw(vectors, offset, { draw: restDraw, group: groupOf(groups, restDraw) }, -durationS);
+      if (restDraw) addDraw(vectors, offset + placeOf(groups, restDraw), restDraw, -durationS);
     }
   });
   return vectors;
@@ -88,9 +88,9 @@ function intervalLoads(
   const intervalExcess = new Float64Array(loads.length * width);
   for (const { interval, offset } of loads) {
     for (const { partIndex, draw } of interval.occupants) {
-      addDraw(intervalExcess, offset, { draw, group: groupOf(groups, draw) }, 1);
+      addDraw(intervalExcess, offset + placeOf(groups, draw), draw, 1);
       const restDraw = program.parts[partIndex]?.restDraw;
-      if (restDraw) addDraw(intervalExcess, offset, { draw: restDraw, group: groupOf(groups, restDraw) }, -1);
+      if (restDraw) addDraw(intervalExcess, offset + placeOf(groups, restDraw), restDraw, -1);
     }
   }
   return { intervals: loads, intervalExcess };
