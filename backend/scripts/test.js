@@ -6,7 +6,7 @@ import { startThrowAwayPostgres } from './postgres.js';
 import { ROOT, atEnd, goOn, requireNode, runMain, say } from './project.js';
 
 const QUICK = ['unit', 'truth', 'ui'];
-const SLOW = ['api', 'browser'];
+const SERVED = ['api', 'browser'];
 
 /** @typedef {{ passed: number, failed: number }} Count */
 
@@ -58,7 +58,11 @@ async function check(name, command) {
 async function checks() {
   return sum([
     await check('type check', ['typescript/bin/tsc', '-b']),
-    await check('lint', ['eslint/bin/eslint.js', '.', '--max-warnings', '0']),
+    await check('lint', [
+      'eslint/bin/eslint.js',
+      ...['.', '--max-warnings', '0', '--cache', '--cache-strategy', 'content'],
+      ...['--cache-location', '.local/eslint-cache'],
+    ]),
     await check('format', [
       'prettier/bin/prettier.cjs',
       ...['--check', '.', '--log-level', 'warn', '--cache', '--cache-strategy', 'content'],
@@ -89,7 +93,7 @@ const sum = (counts) =>
 
 const words = process.argv.slice(2);
 const isLong = words.includes('--long');
-const asked = words.filter((word) => [...QUICK, ...SLOW].includes(word));
+const asked = words.filter((word) => [...QUICK, ...SERVED].includes(word));
 const filters = words.filter((word) => word !== '--long' && !asked.includes(word));
 const isWanted = (/** @type {string} */ name) => asked.length === 0 || asked.includes(name);
 
@@ -100,13 +104,13 @@ async function main() {
   atEnd(() => say(`${total.passed} passed, ${total.failed} failed`));
   requireNode();
   const quick = QUICK.filter(isWanted);
-  const slow = SLOW.filter(isWanted);
-  const needsCluster = slow.length > 0 && process.env['TEST_DATABASE_URL'] === undefined;
+  const served = SERVED.filter(isWanted);
+  const needsCluster = served.length > 0 && process.env['TEST_DATABASE_URL'] === undefined;
   /** @type {NodeJS.ProcessEnv} */
   const env = isLong ? { LONG: '1' } : {};
-  if (slow.includes('browser')) ensureTestPrograms();
+  if (served.includes('browser')) ensureTestPrograms();
   else if (needsCluster) ensurePostgres(null);
-  if (slow.includes('browser')) env['CHROMIUM_PATH'] = ensureChromium();
+  if (served.includes('browser')) env['CHROMIUM_PATH'] = ensureChromium();
   ensurePackages();
   if (needsCluster) {
     const starting = startThrowAwayPostgres();
@@ -114,12 +118,14 @@ async function main() {
     env['TEST_DATABASE_URL'] = (await starting).baseUrl;
     goOn();
   }
-  // Two lanes for two cores; the suites with a real browser and database come alone.
   const isWhole = asked.length === 0;
-  const first = isWhole
-    ? await Promise.all([checks(), suites(quick, { ...env, TEST_WORKERS: '1' })])
-    : [await suites(quick, env)];
-  total = sum([...first, await suites(slow, env)]);
+  // Two lanes for two cores; the suite with a real browser takes both.
+  const lane = isWhole ? { ...env, TEST_WORKERS: '1' } : env;
+  const api = served.filter((name) => name === 'api');
+  const firstLane = async () => sum([...(isWhole ? [await checks()] : []), await suites(api, lane)]);
+  const first = await Promise.all([firstLane(), suites(quick, lane)]);
+  const browser = served.filter((name) => name === 'browser');
+  total = sum([...first, await suites(browser, env)]);
   return total.failed === 0 ? 0 : 1;
 }
 

@@ -106,15 +106,22 @@ export async function takePicture(page: Page, name: string, options: { fullPage?
   });
 }
 
-/** What axe finds on the page as it stands, one line each: rule, element, how to mend it. Empty when all is well. */
-export async function axeViolations(page: Page): Promise<string[]> {
-  await page.evaluate(axe.source);
-  return page.evaluate(async () => {
-    const { violations } = await window.axe.run({ resultTypes: ['violations'] });
+/**
+ * What axe finds on the page as it stands, one line each: rule, element, how to mend it. Empty when all is well.
+ *
+ * @param rules only these; all that axe recommends when left out
+ */
+export async function axeViolations(page: Page, rules?: string[]): Promise<string[]> {
+  if (!(await page.evaluate(() => 'axe' in window))) await page.evaluate(axe.source);
+  return page.evaluate(async (only) => {
+    const { violations } = await window.axe.run({
+      resultTypes: ['violations'],
+      ...(only === undefined ? {} : { runOnly: only }),
+    });
     return violations.flatMap(({ id, nodes }) =>
       nodes.map(({ target, failureSummary }) => `${id}: ${target.join(' ')}: ${failureSummary ?? ''}`),
     );
-  });
+  }, rules);
 }
 
 declare global {
