@@ -8,6 +8,14 @@ export { advertisingEvent, advertisingPacketS, type AdvertisingPhy } from './lin
 export { chirpAirtimeS, isLowDataRate, type ChirpInput } from './link/chirp-airtime.ts';
 export { crystalCaution, crystalTolerance, phyLimitPpm, type CrystalTolerance } from './link/crystal.ts';
 export { csmaCa, type BackoffSettings, type CsmaCa, type CsmaCaInput } from './link/csma-ca.ts';
+export { dutyCycleBands, type DutyCycleBand } from './link/duty-cycle-bands.table.ts';
+export {
+  dutyCycleBandOf,
+  dutyCycleCaution,
+  dutyCycleLimit,
+  type DutyCycleInput,
+  type DutyCycleLimit,
+} from './link/duty-cycle-limit.ts';
 export { frameAirtimeS, type FrameAirtimeOptions } from './link/frame-airtime.ts';
 export { guardWindow, longestResynchronisationS, type GuardInput, type GuardWindow } from './link/guard-window.ts';
 export { interframeSpaceS } from './link/interframe-space.ts';
@@ -15,6 +23,18 @@ export { macHeader, type MacHeader, type MacHeaderInput } from './link/mac-heade
 export { phyOf } from './link/phy-of.ts';
 export { phyPresets } from './link/phy.table.ts';
 export type { Phy, PhyConstant } from './link/phy.types.ts';
+export {
+  sampledListening,
+  sampledSender,
+  synchronisedWindow,
+  WAKE_UP_PSDU_OCTETS,
+  type SampledListening,
+  type SampledListeningInput,
+  type SampledSender,
+  type SampledSenderInput,
+  type SharedPhase,
+  type SynchronisedWindowInput,
+} from './link/sampled-listening.ts';
 export { serialTransferS } from './link/serial-transfer.ts';
 export { sharedSlots, type SharedSlots, type SharedSlotsInput } from './link/shared-slots.ts';
 export { SLOT_TEMPLATE_CONFLICT, slotTemplates, type SlotTemplate } from './link/slot-templates.table.ts';
