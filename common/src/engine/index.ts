@@ -4,8 +4,26 @@ export type * from './node/node-program.types.ts';
 export type * from './forecast/forecast.types.ts';
 
 // link
-export { advertisingEvent, advertisingPacketS, type AdvertisingPhy } from './link/advertising-event.ts';
+export {
+  ADVERTISING_INTERVAL_UNIT_S,
+  ADVERTISING_SPACE_S,
+  advertisingEvent,
+  advertisingPacketS,
+  advertisingPeriodS,
+  scannableEvent,
+  type AdvertisingPhy,
+  type ScannableEvent,
+  type ScannableEventInput,
+} from './link/advertising-event.ts';
 export { chirpAirtimeS, isLowDataRate, type ChirpInput } from './link/chirp-airtime.ts';
+export {
+  chirpWindows,
+  windowOpenS,
+  type ChirpWindow,
+  type ChirpWindows,
+  type ChirpWindowsInput,
+  type ReceiveWindow,
+} from './link/chirp-windows.ts';
 export { crystalCaution, crystalTolerance, phyLimitPpm, type CrystalTolerance } from './link/crystal.ts';
 export { csmaCa, type BackoffSettings, type CsmaCa, type CsmaCaInput } from './link/csma-ca.ts';
 export { dutyCycleBands, type DutyCycleBand } from './link/duty-cycle-bands.table.ts';
@@ -16,6 +34,7 @@ export {
   type DutyCycleInput,
   type DutyCycleLimit,
 } from './link/duty-cycle-limit.ts';
+export type { AcknowledgedExchange, ExchangeInput, ExchangeParts } from './link/exchange-over-access.ts';
 export { frameAirtimeS, type FrameAirtimeOptions } from './link/frame-airtime.ts';
 export { guardWindow, longestResynchronisationS, type GuardInput, type GuardWindow } from './link/guard-window.ts';
 export { interframeSpaceS } from './link/interframe-space.ts';
