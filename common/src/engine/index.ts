@@ -38,7 +38,15 @@ export type { AcknowledgedExchange, ExchangeInput, ExchangeParts } from './link/
 export { frameAirtimeS, type FrameAirtimeOptions } from './link/frame-airtime.ts';
 export { guardWindow, longestResynchronisationS, type GuardInput, type GuardWindow } from './link/guard-window.ts';
 export { interframeSpaceS } from './link/interframe-space.ts';
+export { frameLoading, type LoadingTimes } from './link/loading.ts';
 export { macHeader, type MacHeader, type MacHeaderInput } from './link/mac-header.ts';
+export {
+  overhear,
+  receptionOf,
+  type OverhearInput,
+  type ReceptionInput,
+  type ReceptionTimes,
+} from './link/overhearing.ts';
 export { phyOf } from './link/phy-of.ts';
 export { phyPresets } from './link/phy.table.ts';
 export type { Phy, PhyConstant } from './link/phy.types.ts';
@@ -54,6 +62,7 @@ export {
   type SharedPhase,
   type SynchronisedWindowInput,
 } from './link/sampled-listening.ts';
+export { BEACON_REQUEST_PSDU_OCTETS, scanTimes, type ScanInput, type ScanTimes } from './link/scan.ts';
 export { serialTransferS } from './link/serial-transfer.ts';
 export { sharedSlots, type SharedSlots, type SharedSlotsInput } from './link/shared-slots.ts';
 export { SLOT_TEMPLATE_CONFLICT, slotTemplates, type SlotTemplate } from './link/slot-templates.table.ts';
