@@ -146,7 +146,7 @@ function putOn(context: CandidateContext, ground: Candidate, load: IntervalLoad,
   candidate.awayMask = ground.awayMask | load.awayMask;
   candidate.limit = railLimit(loads.restLimitsV, candidate.busy, candidate.awayMask);
   candidate.limitV = cellLimitV(converter, candidate.limit.railV);
-  candidate.freshOhm = freshResistanceOhm(resistanceOhm, load.interval.durationS) * resistanceFactor;
+  candidate.freshOhm = freshResistanceOhm(resistanceOhm, load.interval.longestS) * resistanceFactor;
   candidate.source = load;
 }
 

@@ -43,7 +43,7 @@ export function peakOf(compiled: CompiledScenario, moment: PeakMoment): Peak | n
     .map((load) => ({ interval: load.interval, currentA: currents([load]) }))
     .sort((a, b) => b.currentA - a.currentA);
   if (!peak) return null;
-  const { id: intervalId, stepId, durationS } = peak.interval;
+  const { id: intervalId, stepId, longestS: durationS } = peak.interval;
   return { currentA: peak.currentA, intervalId, stepId, durationS, meeting: meetingOf(compiled, others, currents) };
 }
 
@@ -79,7 +79,7 @@ function currentsAt(compiled: CompiledScenario, moment: PeakMoment, always: read
     let durationS = Infinity;
     for (const load of intervals) {
       addLoad(rail, weighGroups(loads.intervalExcess, load.offset, factors));
-      durationS = Math.min(durationS, load.interval.durationS);
+      durationS = Math.min(durationS, load.interval.longestS);
     }
     for (const load of always) {
       if (intervals.some(({ routineIndex }) => routineIndex === load.routineIndex)) continue;

@@ -63,12 +63,14 @@ export function macHeader(input: MacHeaderInput): MacHeader {
   requireNumber(fcsOctets, { field: 'fcsOctets', ...octets });
   requireNumber(maxPsduOctets, { field: 'maxPsduOctets', ...octets });
   requireVersion(input);
+  const fields = macHeaderFields(input);
   const headerOctets =
-    FRAME_CONTROL_OCTETS +
-    (input.sequenceNumber === false ? 0 : 1) +
-    PAN_ID_OCTETS * panIdCount(input) +
-    ADDRESS_OCTETS[input.destination] +
-    ADDRESS_OCTETS[input.source];
+    fields.frameControl +
+    fields.sequenceNumber +
+    fields.destinationPan +
+    fields.destination +
+    fields.sourcePan +
+    fields.source;
   const { securityHeaderOctets, micOctets } = securityOctets(input);
   const overheadOctets = headerOctets + securityHeaderOctets + informationElementOctets + micOctets + fcsOctets;
   const psduOctets = overheadOctets + payloadOctets;
@@ -129,15 +131,50 @@ function securityOctets(input: MacHeaderInput): { securityHeaderOctets: number; 
 }
 
 /** PAN identifiers in the header: 2003 and 2006 one per address, the source's dropped on compression; 2015 by its Table 7-2. */
-function panIdCount({ frameVersion, destination, source, panIdCompression }: MacHeaderInput): number {
+function panIds(input: MacHeaderInput): { hasDestinationPan: boolean; hasSourcePan: boolean } {
+  const { frameVersion, destination, source, panIdCompression } = input;
   const hasDestination = destination !== 'none';
   const hasSource = source !== 'none';
-  if (frameVersion === '2015') return panIdCount2015(destination, source, panIdCompression);
-  return (hasDestination ? 1 : 0) + (hasSource && !panIdCompression ? 1 : 0);
+  if (frameVersion !== '2015') {
+    return { hasDestinationPan: hasDestination, hasSourcePan: hasSource && !panIdCompression };
+  }
+  if (!hasDestination && !hasSource) return { hasDestinationPan: panIdCompression, hasSourcePan: false };
+  const isOne = !hasDestination || !hasSource || (destination === 'extended' && source === 'extended');
+  if (isOne)
+    return {
+      hasDestinationPan: hasDestination && !panIdCompression,
+      hasSourcePan: !hasDestination && !panIdCompression,
+    };
+  return { hasDestinationPan: true, hasSourcePan: !panIdCompression };
 }
 
-function panIdCount2015(destination: AddressMode, source: AddressMode, panIdCompression: boolean): number {
-  if (destination === 'none' && source === 'none') return panIdCompression ? 1 : 0;
-  const isSingle = destination === 'none' || source === 'none' || (destination === 'extended' && source === 'extended');
-  return (isSingle ? 1 : 2) - (panIdCompression ? 1 : 0);
+/** Fields of a MAC header in the order in which they are sent, octets; absent ones have 0. */
+export interface MacHeaderFields {
+  frameControl: number;
+  sequenceNumber: number;
+  destinationPan: number;
+  destination: number;
+  sourcePan: number;
+  source: number;
+}
+
+/**
+ * Fields of a MAC header without security header and information elements.
+ *
+ * Source: as `macHeader`, which adds them up.
+ *
+ * @param input Frame format.
+ * @returns Octets of each field.
+ * @example macHeaderFields({ frameVersion: '2006', destination: 'short', source: 'short', panIdCompression: true }).sourcePan // 0
+ */
+export function macHeaderFields(input: MacHeaderInput): MacHeaderFields {
+  const { hasDestinationPan, hasSourcePan } = panIds(input);
+  return {
+    frameControl: FRAME_CONTROL_OCTETS,
+    sequenceNumber: input.sequenceNumber === false ? 0 : 1,
+    destinationPan: hasDestinationPan ? PAN_ID_OCTETS : 0,
+    destination: ADDRESS_OCTETS[input.destination],
+    sourcePan: hasSourcePan ? PAN_ID_OCTETS : 0,
+    source: ADDRESS_OCTETS[input.source],
+  };
 }

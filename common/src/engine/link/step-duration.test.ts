@@ -18,7 +18,7 @@ const path = 'node.routines[0].steps[1]';
 
 describe('stepDuration: typed and serial', () => {
   test('is exact for repeats of whole microseconds', () => {
-    expect(stepDuration(step({ kind: 'fixed', typical: 0.1 }, 3))).toEqual({ meanS: 0.3, termsS: [0.3], remark: null });
+    expect(stepDuration(step({ kind: 'fixed', typical: 0.1 }, 3))).toEqual({ meanS: 0.3, termsS: [0.3], remarks: [] });
   });
 
   test('multiplies a serial transfer by the repeats', () => {
@@ -38,9 +38,9 @@ describe('stepDuration: typed and serial', () => {
 
 describe('stepDuration: exchange', () => {
   test('is the airtime of the frame, unrounded', () => {
-    const { meanS, remark } = stepDuration(exchange({ pattern: 'frame', psduOctets: 5 }, { phy: 'sun-fsk-150' }));
+    const { meanS, remarks } = stepDuration(exchange({ pattern: 'frame', psduOctets: 5 }, { phy: 'sun-fsk-150' }));
     expect(meanS).toBe((8 * 13) / 150_000);
-    expect(remark).toBeNull();
+    expect(remarks).toEqual([]);
   });
 
   test('sizes the frame from payload and format, short addresses and an FCS of 2 by default', () => {
@@ -64,7 +64,6 @@ describe('stepDuration: exchange', () => {
 
   const partlyCounted: [ExchangePattern, number][] = [
     [{ pattern: 'acknowledged', psduOctets: 50 }, 50],
-    [{ pattern: 'unacknowledged', psduOctets: 50 }, 50],
     [{ pattern: 'listen-before-talk', psduOctets: 50, channels: 2, retuneS: 0.001 }, 50],
     [{ pattern: 'poll', pendingProbability: { typical: 0.1 } }, 12],
     [{ pattern: 'poll', dataRequestOctets: 18, pendingProbability: { typical: 0.1 } }, 18],
@@ -72,9 +71,9 @@ describe('stepDuration: exchange', () => {
     [{ pattern: 'sampled-sender', periodUnits: 100, psduOctets: 40 }, 40],
   ];
   test.each(partlyCounted)('counts the main frame of %o and remarks what is not counted', (pattern, octets) => {
-    const { meanS, remark } = stepDuration(exchange(pattern), nodeLink, path);
+    const { meanS, remarks } = stepDuration(exchange(pattern), nodeLink, path);
     expect(meanS).toBe((6 + octets) * 32e-6);
-    expect(remark).toMatchObject({ code: 'link-airtime-only', path: `${path}.duration` });
+    expect(remarks).toEqual([expect.objectContaining({ code: 'link-airtime-only', path: `${path}.duration` })]);
   });
 
   test('computes a chirp frame with 8 preamble symbols, header and CRC, and remarks receive windows only', () => {
@@ -85,15 +84,15 @@ describe('stepDuration: exchange', () => {
       codingRate: 1,
       payloadOctets: 10,
     } as const;
-    expect(stepDuration(exchange(chirp))).toMatchObject({ meanS: 0.041216, remark: null });
-    const { remark } = stepDuration(exchange({ ...chirp, receiveWindows: [{ delayS: 1, openS: 0.03 }] }));
-    expect(remark?.code).toBe('link-airtime-only');
+    expect(stepDuration(exchange(chirp))).toMatchObject({ meanS: 0.041216, remarks: [] });
+    const { remarks } = stepDuration(exchange({ ...chirp, receiveWindows: [{ delayS: 1, openS: 0.03 }] }));
+    expect(remarks[0]?.code).toBe('link-airtime-only');
   });
 
   test('computes all packets of an advertising event and remarks scan responses only', () => {
     const advertising = { pattern: 'advertising', advertisingPhy: '1M', dataOctets: 31, channels: 3 } as const;
-    expect(stepDuration(exchange(advertising))).toMatchObject({ meanS: 0.001128, remark: null });
-    expect(stepDuration(exchange({ ...advertising, scanResponse: true })).remark?.code).toBe('link-airtime-only');
+    expect(stepDuration(exchange(advertising))).toMatchObject({ meanS: 0.001128, remarks: [] });
+    expect(stepDuration(exchange({ ...advertising, scanResponse: true })).remarks[0]?.code).toBe('link-airtime-only');
   });
 
   const withoutFrame: ExchangePattern[] = [

@@ -1,29 +1,18 @@
-import { EngineError, InconsistentInputError } from '#common/errors.ts';
-import { stepDuration } from '../link/step-duration.ts';
-import type { StepDuration } from '../link/step-duration.ts';
-import type { LinkSettings, Routine, Step } from '../scenario/scenario.types.ts';
+import type { Routine } from '../scenario/scenario.types.ts';
 import { addBusyParts } from './busy-parts.ts';
+import { expandStep } from './expand-step.ts';
+import type { StepContext } from './expand-step.ts';
 import { intervalsOf } from './intervals.ts';
 import { layOut } from './lay-out.ts';
 import type { Layout, StepModel } from './layout.types.ts';
-import { fromMicros, toMicros } from './micros.ts';
+import { fromMicros } from './micros.ts';
 import type { RoutineProgram, Segment } from './node-program.types.ts';
 import type { NodeReport } from './node-report.ts';
 import type { PartModel, StateModel } from './part-model.ts';
 import { reachableStateIds } from './transition-path.ts';
 
 /** What all routines of a node share. */
-export interface RoutineContext {
-  parts: readonly PartModel[];
-  partById: ReadonlyMap<string, PartModel>;
-  link: LinkSettings | undefined;
-  report: NodeReport;
-}
-
-interface StepContext extends RoutineContext {
-  /** Remarks of a disabled routine would tell of what is not counted anyway. */
-  isEnabled: boolean;
-}
+export type RoutineContext = Omit<StepContext, 'isEnabled'>;
 
 /**
  * Compiles one routine whose ids have been checked.
@@ -37,13 +26,20 @@ interface StepContext extends RoutineContext {
 export function compileRoutine(context: RoutineContext, routine: Routine, path: string): RoutineProgram {
   const { parts, partById, report } = context;
   const stepContext = { ...context, isEnabled: routine.enabled };
-  const steps = routine.steps.map((step, index) => stepModel(stepContext, step, `${path}.steps[${index}]`));
+  const steps = routine.steps.flatMap((step, index) => expandStep(stepContext, step, `${path}.steps[${index}]`));
+  const withoutPath = new Set<string>();
   const layout = layOut({
     parts,
     steps,
     isCyclic: routine.schedule.kind === 'always',
-    onNoPath: (part, from, to, stepIndex) =>
-      reportNoPath(report, { part, from, to, field: `${path}.steps[${stepIndex}].states.${part.part.id}` }),
+    onNoPath: (part, from, to, stepIndex) => {
+      const step = steps[stepIndex];
+      const field = `${step?.path ?? path}.${step?.radioIndex === part.index ? 'duration' : `states.${part.part.id}`}`;
+      const key = `${field} ${from.stateId} ${to.stateId}`;
+      // Repeats of an exchange meet the same gap again and again.
+      if (!withoutPath.has(key)) reportNoPath(report, { part, from, to, field });
+      withoutPath.add(key);
+    },
   });
   addBusyParts(layout, parts, partById, (mover, { hop }) => {
     if (routine.enabled) remarkBusyElsewhere(report, mover, hop.transitionIndex);
@@ -53,58 +49,10 @@ export function compileRoutine(context: RoutineContext, routine: Routine, path: 
     routineId: routine.id,
     name: routine.name,
     schedule: routine.schedule,
-    cycleS: fromMicros(layout.cycleUs),
-    intervals: intervalsOf(layout, routine.id, routine.steps),
-    segments: segmentsOf(layout, routine.steps),
+    cycleS: fromMicros(layout.cycleUs) + layout.roundedOffS,
+    intervals: intervalsOf(layout, routine.id, steps),
+    segments: segmentsOf(layout, steps),
   };
-}
-
-function stepModel(context: StepContext, step: Step, path: string): StepModel {
-  const { parts, partById, report } = context;
-  const named = new Array<StateModel | undefined>(parts.length).fill(undefined);
-  for (const partId of Object.keys(step.states)) {
-    const part = partById.get(partId);
-    if (part) named[part.index] = part.stateById.get(step.states[partId] ?? '');
-  }
-  for (const part of parts) if (part.hasNeeds) checkNeeds(context, { part, named, path });
-  const { meanS, termsS, remark } = durationOrReport(context, step, path);
-  if (remark && context.isEnabled) report.remark(remark);
-  return { named, durationUs: toMicros(meanS), durationS: meanS, termsS };
-}
-
-function durationOrReport({ link, report }: RoutineContext, step: Step, path: string): StepDuration {
-  try {
-    return stepDuration(step, link, path);
-  } catch (error) {
-    if (!(error instanceof EngineError)) throw error;
-    report.add(error);
-    return { meanS: 0, termsS: [0], remark: null };
-  }
-}
-
-function checkNeeds(
-  { partById, report }: RoutineContext,
-  { part, named, path }: { part: PartModel; named: readonly (StateModel | undefined)[]; path: string },
-): void {
-  const { needs, stateId } = named[part.index] ?? part.rest;
-  if (!needs) return;
-  const needed = partById.get(needs.partId);
-  if (!needed) return;
-  const given = named[needed.index] ?? needed.rest;
-  if (needs.stateIds.includes(given.stateId)) return;
-  const expected = `"${needed.part.name}" in ${needs.stateIds.join(' or ')}`;
-  report.add(
-    new InconsistentInputError(
-      `"${part.part.name}" in the state "${stateId}" needs ${expected}, but "${needed.part.name}" is in "${given.stateId}".`,
-      {
-        code: 'need-unmet',
-        field: `${path}.states.${part.part.id}`,
-        value: given.stateId,
-        expected,
-        relatedFields: [`${path}.states.${needed.part.id}`],
-      },
-    ),
-  );
 }
 
 function reportNoPath(
@@ -141,9 +89,9 @@ function remarkBusyElsewhere(report: NodeReport, mover: PartModel, transitionInd
   });
 }
 
-function segmentsOf(layout: Layout, steps: readonly Step[]): Segment[] {
+function segmentsOf(layout: Layout, steps: readonly StepModel[]): Segment[] {
   return layout.spans.map(({ occupant, termsS, stepIndex }) => ({
-    stepId: steps[stepIndex]?.id ?? '',
+    stepId: steps[stepIndex]?.step.id ?? '',
     partIndex: occupant.partIndex,
     activity: occupant.activity,
     draw: occupant.draw,

@@ -1,5 +1,4 @@
-import type { Step } from '../scenario/scenario.types.ts';
-import type { LaidWindow, Layout, Span } from './layout.types.ts';
+import type { LaidWindow, Layout, Span, StepModel } from './layout.types.ts';
 import { fromMicros } from './micros.ts';
 import type { Interval, Occupant } from './node-program.types.ts';
 
@@ -14,11 +13,11 @@ const ROUNDING_US = 1e-3;
  *
  * @param layout One cycle laid out.
  * @param routineId Id of the routine, the beginning of each interval's id.
- * @param steps Its steps.
+ * @param steps Its steps and phases, as laid out.
  * @returns Intervals in the order of time; those of kind `return` lie beyond the cycle.
- * @example intervalsOf(layout, 'report', routine.steps)
+ * @example intervalsOf(layout, 'report', steps)
  */
-export function intervalsOf(layout: Layout, routineId: string, steps: readonly Step[]): Interval[] {
+export function intervalsOf(layout: Layout, routineId: string, steps: readonly StepModel[]): Interval[] {
   const { spans } = layout;
   const intervals: Interval[] = [];
   const active: Span[] = [];
@@ -29,8 +28,11 @@ export function intervalsOf(layout: Layout, routineId: string, steps: readonly S
       const span = spans[next];
       if (span && span.endUs > window.startUs) active.push(span);
     }
-    const step = steps[window.stepIndex];
-    if (step) pushWindow(intervals, { window, step, active, id: `${routineId}/${step.id}` });
+    const model = steps[window.stepIndex];
+    if (!model) continue;
+    const id = `${routineId}/${model.step.id}${model.suffix}`;
+    if (window.endUs > window.startUs) pushWindow(intervals, { window, model, active, id });
+    else pushShort(intervals, { window, model, active: spans.slice(0, window.spanCount), id });
   }
   return intervals;
 }
@@ -42,25 +44,62 @@ function dropEnded(active: Span[], nowUs: number): void {
   active.length = kept;
 }
 
-function pushWindow(
-  intervals: Interval[],
-  { window, step, active, id }: { window: LaidWindow; step: Step; active: readonly Span[]; id: string },
-): void {
+interface Cut {
+  window: LaidWindow;
+  model: StepModel;
+  active: readonly Span[];
+  id: string;
+}
+
+/** A step that is shorter than half a microsecond on average; at its worst it may be long, so its voltage is tested. */
+function pushShort(intervals: Interval[], { window, model, active, id }: Cut): void {
+  const { stepIndex, startUs } = window;
+  const occupants = active
+    .filter((span) => {
+      if (span.stepIndex === stepIndex && !span.isHeld && span.startUs === startUs) return true;
+      return span.startUs < startUs && span.endUs > startUs;
+    })
+    .map(({ occupant }) => occupant);
+  intervals.push(intervalOf(window, model, { id, startUs, durationS: window.durationS, occupants }));
+}
+
+function intervalOf(
+  { kind, worstS, longestS, durationS: wholeS }: LaidWindow,
+  { step, phase }: StepModel,
+  own: { id: string; startUs: number; durationS: number; occupants: Occupant[] },
+): Interval {
+  const { id, startUs, durationS, occupants } = own;
+  // A piece of an exchange may last as long as the whole at the worst; a piece of anything else is what it is.
+  const isWhole = durationS === wholeS || phase !== null;
+  return {
+    id,
+    kind,
+    stepId: step.id,
+    stepName: step.name,
+    phase: kind === 'step' ? phase : null,
+    startS: fromMicros(startUs),
+    durationS,
+    worstS: isWhole ? worstS : durationS,
+    longestS: isWhole ? longestS : durationS,
+    occupants,
+  };
+}
+
+function pushWindow(intervals: Interval[], { window, model, active, id }: Cut): void {
   const { kind } = window;
   const base = kind === 'step' ? id : `${id}#${kind}`;
   const edges = edgesWithin(window, active);
   let startUs = window.startUs;
   for (let index = 0; index <= edges.length; index++) {
     const endUs = edges[index] ?? window.endUs;
-    intervals.push({
-      id: index === 0 ? base : `${base}${kind === 'step' ? '#' : ''}${index + 1}`,
-      kind,
-      stepId: step.id,
-      stepName: step.name,
-      startS: fromMicros(startUs),
-      durationS: edges.length === 0 ? window.durationS : fromMicros(endUs - startUs),
-      occupants: occupantsOf(active, startUs, endUs),
-    });
+    intervals.push(
+      intervalOf(window, model, {
+        id: index === 0 ? base : `${base}${kind === 'step' ? '#' : ''}${index + 1}`,
+        startUs,
+        durationS: edges.length === 0 ? window.durationS : fromMicros(endUs - startUs),
+        occupants: occupantsOf(active, startUs, endUs),
+      }),
+    );
     startUs = endUs;
   }
 }

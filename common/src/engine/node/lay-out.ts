@@ -24,7 +24,7 @@ const NO_MOVE: TransitionPath = { hops: [], totalUs: 0 };
  */
 export function layOut(input: LayOutInput): Layout {
   const { parts, steps, isCyclic } = input;
-  const layout: Layout = { spans: [], claims: [], windows: [], cycleUs: 0, instantMovers: new Set() };
+  const layout: Layout = { spans: [], claims: [], windows: [], cycleUs: 0, roundedOffS: 0, instantMovers: new Set() };
   const returning: (Returning | null)[] = parts.map(() => null);
   const firstNamedUs: (number | undefined)[] = parts.map(() => undefined);
   let states = parts.map((part) => (isCyclic ? steps.at(-1)?.named[part.index] : undefined) ?? part.rest);
@@ -64,7 +64,17 @@ function addWindow(layout: Layout, kind: LaidWindow['kind'], stepIndex: number, 
   const startUs = layout.cycleUs;
   if (endUs <= startUs) return;
   const durationS = fromMicros(endUs - startUs);
-  layout.windows.push({ kind, stepIndex, startUs, endUs, durationS, spanCount: layout.spans.length });
+  const spanCount = layout.spans.length;
+  layout.windows.push({
+    kind,
+    stepIndex,
+    startUs,
+    endUs,
+    durationS,
+    worstS: durationS,
+    longestS: durationS,
+    spanCount,
+  });
 }
 
 function layMoves(input: LayOutInput, layout: Layout, at: At): void {
@@ -115,14 +125,19 @@ function layStep(input: LayOutInput, layout: Layout, at: At, returning: (Returni
     const before = states[part.index] ?? part.rest;
     if (named && !named.isRest) {
       const { occupant } = named;
-      addSpan(layout, { occupant, startUs, endUs, termsS: step.termsS, stepIndex, isHeld: false });
+      // Less than half a microsecond has no length on the timeline, but its charge counts.
+      if (step.durationS > 0) {
+        layout.spans.push({ occupant, startUs, endUs, termsS: step.termsS, stepIndex, isHeld: false });
+      }
     } else if (!named && !before.isRest) {
       returning[part.index] = layReturn(input, layout, { stepIndex, part, from: before });
     }
   }
-  if (endUs > startUs) {
+  const { durationS, worstS, longestS } = step;
+  if (durationS > 0) {
     const spanCount = layout.spans.length;
-    layout.windows.push({ kind: 'step', stepIndex, startUs, endUs, durationS: step.durationS, spanCount });
+    layout.windows.push({ kind: 'step', stepIndex, startUs, endUs, durationS, worstS, longestS, spanCount });
+    layout.roundedOffS += durationS - fromMicros(step.durationUs);
   }
   layout.cycleUs = endUs;
 }

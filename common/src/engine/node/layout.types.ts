@@ -1,13 +1,27 @@
+import type { PhaseId } from '../link/exchange-plan.types.ts';
+import type { Step } from '../scenario/scenario.types.ts';
 import type { Occupant } from './node-program.types.ts';
 import type { Hop, PartModel, StateModel } from './part-model.ts';
 
-/** A step made ready for the timeline. */
+/** A step, or a phase of an exchange step, made ready for the timeline. */
 export interface StepModel {
+  step: Step;
+  /** Path of the step in the input. */
+  path: string;
+  phase: { id: PhaseId; name: string } | null;
+  /** Radio whose states the phases set, by part index; −1 for steps that are no phase. */
+  radioIndex: number;
+  /** What follows `<routineId>/<stepId>` in the ids of its intervals. */
+  suffix: string;
   /** State of each part by part index; undefined where the step does not name the part. */
   named: readonly (StateModel | undefined)[];
+  /** On the timeline, where derived durations are whole microseconds. */
   durationUs: number;
+  /** Unrounded. */
   durationS: number;
   termsS: readonly number[];
+  worstS: number;
+  longestS: number;
 }
 
 /** A time during which one part does one thing other than resting. */
@@ -38,6 +52,8 @@ export interface LaidWindow {
   startUs: number;
   endUs: number;
   durationS: number;
+  worstS: number;
+  longestS: number;
   /** Number of the layout's spans among which all that overlap this window are found. */
   spanCount: number;
 }
@@ -48,6 +64,8 @@ export interface Layout {
   claims: BusyClaim[];
   windows: LaidWindow[];
   cycleUs: number;
+  /** What the rounding of derived durations took from the cycle, s; may be negative. */
+  roundedOffS: number;
   /** Indices of parts that changed state without any declared transition. */
   instantMovers: Set<number>;
 }

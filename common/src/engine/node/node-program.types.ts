@@ -1,3 +1,4 @@
+import type { PhaseId } from '../link/exchange-plan.types.ts';
 import type { LoadLaw, Schedule } from '../scenario/scenario.types.ts';
 
 /** What a state, transition or leakage takes from the rail: the typical current with its law. */
@@ -30,16 +31,25 @@ export interface Occupant {
  * two intervals of the same step. Intervals after the last step ('return') lie beyond the cycle and delay nobody.
  */
 export interface Interval {
-  /** Unique in the node, stable between calls: `<routineId>/<stepId>` with a suffix where the step has several. */
+  /**
+   * Unique in the node, stable between calls: `<routineId>/<stepId>`, for a phase of an exchange `<routineId>/<stepId>/<phase>`,
+   * with a suffix where there are several.
+   */
   id: string;
   kind: 'step' | 'move' | 'return';
   /** The step it belongs to; for a move the step that it leads into, for a return after the last step that last step. */
   stepId: string;
   stepName: string;
+  /** Phase of the exchange that this is a part of; null for steps that are none, and for moves and returns. */
+  phase: { id: PhaseId; name: string } | null;
   /** Offset from the start of the cycle, s. */
   startS: number;
   /** Mean duration, s, all repeats together, unrounded. */
   durationS: number;
+  /** Longest duration, s: of an exchange at its worst; otherwise equal to `durationS`. */
+  worstS: number;
+  /** Longest uninterrupted stretch, s, for which a cell has to bear it at once; otherwise equal to `durationS`. */
+  longestS: number;
   /** Parts not at rest; parts not listed rest. */
   occupants: Occupant[];
 }

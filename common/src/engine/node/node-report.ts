@@ -32,9 +32,9 @@ export class NodeReport {
     this.errors.push(new OutOfRangeError(message, { code: 'out-of-range', field, value, unit, expected }));
   }
 
-  /** Notes a remark once per code and path. */
+  /** Notes a remark once. */
   remark(remark: NodeRemark): void {
-    const key = `${remark.code} ${remark.path}`;
+    const key = `${remark.code} ${remark.path} ${remark.message}`;
     if (this.remarked.has(key)) return;
     this.remarked.add(key);
     this.remarks.push(remark);

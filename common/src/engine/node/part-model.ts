@@ -1,4 +1,4 @@
-import type { Part, State, Transition } from '../scenario/scenario.types.ts';
+import type { Part, State, StateRole, Transition } from '../scenario/scenario.types.ts';
 import { constantDraw, stateDraw } from './draw.ts';
 import { toMicros } from './micros.ts';
 import type { Occupant } from './node-program.types.ts';
@@ -9,6 +9,7 @@ export interface StateModel {
   stateId: string;
   occupant: Occupant;
   isRest: boolean;
+  role: StateRole | undefined;
   needs: State['needs'];
 }
 
@@ -29,6 +30,8 @@ export interface TransitionPath {
   hops: readonly Hop[];
   totalUs: number;
 }
+
+const SAME_CIRCUIT: Partial<Record<StateRole, StateRole>> = { listen: 'receive', receive: 'listen' };
 
 /** A part made ready for the timeline. */
 export interface PartModel {
@@ -60,6 +63,7 @@ export function partModel(part: Part, index: number, defaultReferenceVoltageV: n
     index: stateIndex,
     stateId: state.id,
     isRest: state.id === part.restStateId,
+    role: state.role,
     needs: state.needs,
     occupant: {
       partIndex: index,
@@ -91,6 +95,28 @@ export function partModel(part: Part, index: number, defaultReferenceVoltageV: n
       },
     });
   });
+  addSameCircuit(states, hopsFrom);
   const hasNeeds = part.states.some((state) => state.needs !== undefined);
   return { index, part, states, stateById, rest, hasNeeds, hopsFrom, pathsFrom: [] };
+}
+
+/** Listening and receiving are the same circuit: no time lies between them unless a transition is declared. */
+function addSameCircuit(states: readonly StateModel[], hopsFrom: readonly Hop[][]): void {
+  for (const from of states) {
+    const counterpart = SAME_CIRCUIT[from.role ?? 'active'];
+    if (counterpart === undefined) continue;
+    const hops = hopsFrom[from.index];
+    for (const to of states) {
+      if (to.role !== counterpart || hops?.some(({ toIndex }) => toIndex === to.index) !== false) continue;
+      hops.push({
+        transitionIndex: -1,
+        toIndex: to.index,
+        durationUs: 0,
+        termsS: [0],
+        chargeC: 0,
+        busy: undefined,
+        occupant: from.occupant,
+      });
+    }
+  }
 }

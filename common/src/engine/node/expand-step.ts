@@ -1,0 +1,195 @@
+import { EngineError } from '#common/errors.ts';
+import type { ExchangePhase, ExchangePlan } from '../link/exchange-plan.types.ts';
+import { stepDuration, stepPlan } from '../link/step-duration.ts';
+import type { ExchangeDuration, FrameLoading, LinkSettings, Step } from '../scenario/scenario.types.ts';
+import { checkNeeds } from './check-needs.ts';
+import { radioOf, radioState, remarkDoubleCounts } from './exchange-states.ts';
+import type { StepModel } from './layout.types.ts';
+import { toMicros } from './micros.ts';
+import type { NodeReport } from './node-report.ts';
+import type { PartModel, StateModel } from './part-model.ts';
+
+/** What all steps of a routine share. */
+export interface StepContext {
+  parts: readonly PartModel[];
+  partById: ReadonlyMap<string, PartModel>;
+  link: LinkSettings | undefined;
+  report: NodeReport;
+  /** Remarks of a disabled routine would tell of what is not counted anyway. */
+  isEnabled: boolean;
+}
+
+/** Sub-steps that the repeats of one step may become; beyond, durations are multiplied instead. */
+const MOST_SUB_STEPS = 64;
+
+/**
+ * Makes a step ready for the timeline: itself, or for an exchange one sub-step per phase, with the radio in the state of the
+ * phase's role and the other parts as the step says. The pattern `frame` is no such exchange: it lasts as long as its airtime,
+ * in the states typed.
+ *
+ * @param context Parts, link defaults and the report, which gets every problem and remark.
+ * @param step The step; its ids have been checked.
+ * @param path Its path in the input.
+ * @returns The step or its phases in the order of time, repeats included.
+ * @example expandStep(context, step, 'node.routines[0].steps[1]').map(({ phase }) => phase?.id)
+ */
+export function expandStep(context: StepContext, step: Step, path: string): StepModel[] {
+  const { parts, partById } = context;
+  const named = new Array<StateModel | undefined>(parts.length).fill(undefined);
+  for (const partId of Object.keys(step.states)) {
+    const part = partById.get(partId);
+    if (part) named[part.index] = part.stateById.get(step.states[partId] ?? '');
+  }
+  const own = { step, path, phase: null, radioIndex: -1, suffix: '', named };
+  const models =
+    step.duration.kind === 'exchange' ? exchangeModels(context, own, step.duration) : [wholeStep(context, own)];
+  checkNeeds(context, models, path);
+  return models;
+}
+
+interface Phased {
+  plan: ExchangePlan;
+  radio: PartModel;
+  exchange: ExchangeDuration;
+}
+
+type Own = Pick<StepModel, 'step' | 'path' | 'phase' | 'radioIndex' | 'suffix' | 'named'>;
+
+function wholeStep(context: StepContext, own: Own): StepModel {
+  const { meanS, termsS } = reported(context, { meanS: 0, termsS: [0], remarks: [] }, () =>
+    stepDuration(own.step, context.link, own.path),
+  );
+  const isTyped = own.step.duration.kind === 'fixed';
+  const durationUs = isTyped ? toMicros(meanS) : wholeMicros(meanS);
+  return { ...own, durationUs, durationS: meanS, termsS, worstS: meanS, longestS: meanS };
+}
+
+/** Rounded half up. Durations are no negative numbers. */
+function wholeMicros(timeS: number): number {
+  return Math.round(timeS * 1e6);
+}
+
+/** Runs a computation whose errors are the input's; they are collected, and a stand-in goes on. */
+function reported<T>({ report }: StepContext, standIn: T, compute: () => T): T {
+  try {
+    return compute();
+  } catch (error) {
+    if (!(error instanceof EngineError)) throw error;
+    report.add(error);
+    return standIn;
+  }
+}
+
+function exchangeModels(context: StepContext, own: Own, exchange: ExchangeDuration): StepModel[] {
+  const { path } = own;
+  const found = reported(context, null, () => stepPlan(exchange, { nodeLink: context.link, path }));
+  if (found === null) return [{ ...own, durationUs: 0, durationS: 0, termsS: [0], worstS: 0, longestS: 0 }];
+  const { plan, remarks } = found;
+  if (context.isEnabled) for (const remark of remarks) context.report.remark(remark);
+  const radio = radioOf(context, own, exchange);
+  if (!radio || isPlain(exchange, plan)) return [wholeExchange(own, plan)];
+  return repeated(context, phaseModels(context, own, { plan, radio, exchange }));
+}
+
+/** A frame alone lasts as long as its airtime, in the states that the step types. */
+function isPlain({ pattern }: ExchangeDuration, { phases }: ExchangePlan): boolean {
+  return pattern === 'frame' && phases.length === 1;
+}
+
+/** An exchange in the states that the step types: no part follows its phases. */
+function wholeExchange(own: Own, plan: ExchangePlan): StepModel {
+  const { repeats = 1 } = own.step;
+  const durationS = plan.meanS * repeats;
+  const worstS = Math.max(durationS, plan.worstS * repeats);
+  return { ...own, durationUs: wholeMicros(durationS), durationS, termsS: [durationS], worstS, longestS: worstS };
+}
+
+function phaseModels(context: StepContext, own: Own, phased: Phased): StepModel[] {
+  const { plan, radio, exchange } = phased;
+  const models: StepModel[] = [];
+  for (const phase of plan.phases) {
+    // What never happens takes the radio nowhere.
+    if (!(phase.meanS > 0)) continue;
+    const isTyped = exchange.pattern === 'frame' && phase.id === 'frame';
+    const state = isTyped ? own.named[radio.index] : radioState(context, own, { phase, radio });
+    models.push(phaseModel(own, phase, { radio, state }));
+  }
+  if (context.isEnabled) remarkDoubleCounts(context, models, radio);
+  return exchange.loading ? withLoading(context, models, { loading: exchange.loading, plan }) : models;
+}
+
+function phaseModel(
+  own: Own,
+  { id, name, meanS, worstS, longestS }: ExchangePhase,
+  { radio, state }: { radio: PartModel; state: StateModel | undefined },
+): StepModel {
+  const named = [...own.named];
+  named[radio.index] = state;
+  return {
+    ...own,
+    phase: { id, name },
+    radioIndex: radio.index,
+    suffix: `/${id}`,
+    named,
+    durationUs: wholeMicros(meanS),
+    durationS: meanS,
+    termsS: [meanS],
+    worstS: Math.max(meanS, worstS),
+    longestS,
+  };
+}
+
+/** The part that loads the frame is in a state of its own meanwhile: before the exchange, or beside the beginning of the frame. */
+function withLoading(
+  { partById }: StepContext,
+  models: StepModel[],
+  { loading, plan }: { loading: FrameLoading; plan: ExchangePlan },
+): StepModel[] {
+  const loader = partById.get(loading.partId);
+  const state = loader?.stateById.get(loading.stateId);
+  if (!loader || !state) return models;
+  const loadingS = plan.figures.find(({ id }) => id === 'loading')?.value ?? 0;
+  return models.flatMap((model): StepModel[] => {
+    if (model.phase?.id !== (loading.beside === true ? 'frame' : 'loading')) return [model];
+    const named = [...model.named];
+    named[loader.index] = state;
+    if (loading.beside !== true || loadingS >= model.durationS) return [{ ...model, named }];
+    const restS = model.durationS - loadingS;
+    return [
+      { ...model, named, ...lasting(loadingS), suffix: `${model.suffix}/loading` },
+      {
+        ...model,
+        ...lasting(restS),
+        worstS: model.worstS - loadingS,
+        longestS: Math.max(restS, model.longestS - loadingS),
+      },
+    ];
+  });
+}
+
+function lasting(durationS: number): Pick<StepModel, 'durationUs' | 'durationS' | 'termsS' | 'worstS' | 'longestS'> {
+  return { durationUs: wholeMicros(durationS), durationS, termsS: [durationS], worstS: durationS, longestS: durationS };
+}
+
+function repeated({ report, isEnabled }: StepContext, models: StepModel[]): StepModel[] {
+  const [first] = models;
+  const repeats = first?.step.repeats ?? 1;
+  if (!first || repeats === 1) return models;
+  if (repeats * models.length <= MOST_SUB_STEPS) {
+    return Array.from({ length: repeats }, (_, index) =>
+      index === 0 ? models : models.map((model) => ({ ...model, suffix: `${model.suffix}@${index + 1}` })),
+    ).flat();
+  }
+  if (isEnabled) {
+    report.remark({
+      code: 'repeats-merged',
+      message: `The ${repeats} exchanges of "${first.step.name}" are ${models.length} phases each; they are shown and counted as one exchange that takes ${repeats} times as long, so moves of the radio between its states count once.`,
+      path: `${first.path}.repeats`,
+    });
+  }
+  return models.map((model) => {
+    const durationS = model.durationS * repeats;
+    const { longestS } = model;
+    return { ...model, ...lasting(durationS), worstS: model.worstS * repeats, longestS };
+  });
+}
