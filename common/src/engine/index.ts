@@ -15,7 +15,7 @@ export {
   type ScannableEvent,
   type ScannableEventInput,
 } from './link/advertising-event.ts';
-export { chirpAirtimeS, isLowDataRate, type ChirpInput } from './link/chirp-airtime.ts';
+export { chirpAirtimeS, isLowDataRate, networkPayloadOctets, type ChirpInput } from './link/chirp-airtime.ts';
 export {
   chirpWindows,
   windowOpenS,
@@ -47,9 +47,11 @@ export {
   type ReceptionInput,
   type ReceptionTimes,
 } from './link/overhearing.ts';
+export { maxFrameTotalWaitS } from './link/max-frame-total-wait.ts';
 export { phyOf } from './link/phy-of.ts';
 export { phyPresets } from './link/phy.table.ts';
 export type { Phy, PhyConstant } from './link/phy.types.ts';
+export { poll, type Poll, type PollInput, type PollResponse } from './link/poll.ts';
 export {
   sampledListening,
   sampledSender,

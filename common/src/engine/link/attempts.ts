@@ -3,9 +3,9 @@
  *
  * Source: definition.
  *
- * @param ratio Probability that one more attempt follows, 0 to 1.
+ * @param ratio Probability that one more attempt follows, or any other ratio.
  * @param count Attempts allowed; whole, 0 or more.
- * @returns Mean number of attempts.
+ * @returns The sum; of a probability, the mean number of attempts.
  * @example powerSum(0.5, 3) // 1.75
  */
 export function powerSum(ratio: number, count: number): number {
