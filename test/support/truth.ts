@@ -48,6 +48,8 @@ const UNIT_SI: Readonly<Record<string, number>> = {
   us: 1e-6,
   ms: 1e-3,
   s: 1,
+  's per hour': 1,
+  min: 60,
   h: 3_600,
   day: 86_400,
   // A month has no fixed length: the evaluator returns months of the length that its row gives.
@@ -72,11 +74,14 @@ const UNIT_SI: Readonly<Record<string, number>> = {
   mW: 1e-3,
   W: 1,
   'kbit/s': 1e3,
+  kHz: 1e3,
   // The evaluator returns these in the row's unit.
   degC: 1,
   'J/mol': 1,
   '1/year': 1,
   percent: 1e-2,
+  ppm: 1,
+  'frames per hour': 1,
   octets: 1,
   symbols: 1,
   fraction: 1,

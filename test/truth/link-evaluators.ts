@@ -1,16 +1,24 @@
 import { flagInput, numberInput, textInput } from '#test/support/truth.ts';
 import type { TruthEvaluator, TruthRow } from '#test/support/truth.ts';
 import {
+  ADVERTISING_INTERVAL_UNIT_S,
+  ADVERTISING_SPACE_S,
   advertisingEvent,
   advertisingPacketS,
+  advertisingPeriodS,
   chirpAirtimeS,
   frameAirtimeS,
+  guardWindow,
   interframeSpaceS,
   isLowDataRate,
   macHeader,
+  networkPayloadOctets,
+  phyLimitPpm,
   phyPresets,
+  scannableEvent,
 } from '#common/engine/index.ts';
 import type { AddressMode, AdvertisingPhy, MacHeaderInput, Phy } from '#common/engine/index.ts';
+import { linkTimingEvaluators } from './link-timing-evaluators.ts';
 
 /** Mean backoff of an idle channel with the default exponent of 3, in units: (2³ − 1)/2. */
 const MEAN_BACKOFF_UNITS = 3.5;
@@ -33,6 +41,7 @@ const phyValues: [string, (phy: Phy) => number | null][] = [
   ['phy-shr-symbols-', (phy) => (phy.shrOctets === null ? null : phy.shrOctets * phy.symbolsPerOctet)],
   ['phy-max-frame-symbols-', (phy) => frameAirtimeS(phy, phy.maxPsduOctets ?? 0) / phy.symbolS],
   ['phy-sunfsk-mac-symbol', (phy) => phy.macSymbolS],
+  ['phy-limit-', (phy) => (phy.id === 'custom' ? null : phyLimitPpm(phy.id))],
 ];
 
 const macValues: [string, (phy: Phy, row: TruthRow) => number | null][] = [
@@ -86,6 +95,11 @@ function frameOf(row: TruthRow): MacHeaderInput {
 }
 
 const mhr: TruthEvaluator = (row) => {
+  if (row.id === 'const-aMaxMACPayloadSize') {
+    // The least overhead, 9 octets, is that of one short address.
+    const least = { frameVersion: '2006', destination: 'short', source: 'none', panIdCompression: false } as const;
+    return macHeader(least).largestPayloadOctets;
+  }
   const header = macHeader(frameOf(row));
   if (row.id.startsWith('mhr-')) return header.headerOctets;
   if (row.id.startsWith('sec-mic-')) return header.micOctets;
@@ -94,6 +108,7 @@ const mhr: TruthEvaluator = (row) => {
 };
 
 const lora: TruthEvaluator = (row) => {
+  if (row.id === 'lorawan-overhead') return networkPayloadOctets(0, numberInput(row, 'fopts'));
   const spreadingFactor = numberInput(row, 'sf');
   const bandwidthHz = numberInput(row, 'bandwidthHz');
   if (row.id.startsWith('lora-ldro-')) return isLowDataRate(spreadingFactor, bandwidthHz) ? 1 : 0;
@@ -116,7 +131,31 @@ const ADVERTISING_PHYS: Readonly<Record<string, AdvertisingPhy>> = {
   'coded S=2': 'coded-s2',
 };
 
+/** Rows of advertising that are no airtime of a packet. */
+const bleValues: Readonly<Record<string, (row: TruthRow) => number>> = {
+  'ble-ifs': () => ADVERTISING_SPACE_S,
+  'ble-adv-period-20ms': (row) => advertisingPeriodS(numberInput(row, 'advIntervalUs') / 1e6).meanS,
+  'ble-adv-period-10240ms': (row) => advertisingPeriodS(numberInput(row, 'advIntervalUs') / 1e6).meanS,
+  'ble-adv-interval-unit': (row) => numberInput(row, 'units') * ADVERTISING_INTERVAL_UNIT_S,
+  'ble-connectable-event-rx-min': (row) =>
+    scannableEvent({
+      phy: '1M',
+      dataOctets: 0,
+      channels: numberInput(row, 'channels'),
+      responseDataOctets: 0,
+      scanRequestProbability: 0,
+    }).listenS,
+  'ble-window-widening': (row) =>
+    guardWindow({
+      intervalS: numberInput(row, 'sinceAnchorUs') / 1e6,
+      tolerancePpmA: numberInput(row, 'ppmCentral'),
+      tolerancePpmB: numberInput(row, 'ppmPeripheral'),
+    }).halfS,
+};
+
 const ble: TruthEvaluator = (row) => {
+  const compute = bleValues[row.id];
+  if (compute) return compute(row);
   const phy = row.inputs['phy'] === undefined ? '1M' : ADVERTISING_PHYS[textInput(row, 'phy')];
   if (!phy) return null;
   if (row.inputs['advDataOctets'] === undefined) {
@@ -160,8 +199,11 @@ const throughput: TruthEvaluator = (row) => {
 
 /** How the rows of the link's groups are computed by the engine. */
 export const linkEvaluators: Readonly<Record<string, TruthEvaluator>> = {
+  ...linkTimingEvaluators,
   phy: (row) =>
-    byPrefix(row, phyValues)(row.id === 'phy-sunfsk-mac-symbol' ? phyPresets['sun-fsk-200'] : presetOf(row)),
+    row.id.startsWith('phy-centre-frequency-')
+      ? (phyLimitPpm('oqpsk-2450') ?? NaN) * numberInput(row, 'frequencyMHz') // ppm of MHz are Hz
+      : byPrefix(row, phyValues)(row.id === 'phy-sunfsk-mac-symbol' ? phyPresets['sun-fsk-200'] : presetOf(row)),
   mac: (row) => byPrefix(row, macValues)(presetOf(row), row),
   airtime,
   mhr,

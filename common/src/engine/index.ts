@@ -15,6 +15,14 @@ export {
   type ScannableEvent,
   type ScannableEventInput,
 } from './link/advertising-event.ts';
+export {
+  bitErrorRate,
+  frameLoss,
+  SENSITIVITY_SINR_DB,
+  steppedLevelDbm,
+  type FrameLoss,
+  type FrameLossInput,
+} from './link/bit-error.ts';
 export { chirpAirtimeS, isLowDataRate, networkPayloadOctets, type ChirpInput } from './link/chirp-airtime.ts';
 export {
   chirpWindows,
@@ -35,10 +43,30 @@ export {
   type DutyCycleLimit,
 } from './link/duty-cycle-limit.ts';
 export type { AcknowledgedExchange, ExchangeInput, ExchangeParts } from './link/exchange-over-access.ts';
+export { exchangePlan } from './link/exchange-plan.ts';
+export type {
+  ExchangeFigure,
+  ExchangePhase,
+  ExchangePlan,
+  FrameField,
+  FrameLayout,
+  Origin,
+  PhaseId,
+  PlanCaution,
+} from './link/exchange-plan.types.ts';
 export { frameAirtimeS, type FrameAirtimeOptions } from './link/frame-airtime.ts';
 export { guardWindow, longestResynchronisationS, type GuardInput, type GuardWindow } from './link/guard-window.ts';
 export { interframeSpaceS } from './link/interframe-space.ts';
+export { frameLayout, type FrameSize } from './link/frame-layout.ts';
 export { frameLoading, type LoadingTimes } from './link/loading.ts';
+export { linkDefaults, standardFrame, type LinkDefault, type LinkDefaultId } from './link/link-defaults.table.ts';
+export { linkOf } from './link/link-of.ts';
+export {
+  listenBeforeTalk,
+  type ChannelListInput,
+  type ListenBeforeTalk,
+  type ListenBeforeTalkInput,
+} from './link/listen-before-talk.ts';
 export { macHeader, type MacHeader, type MacHeaderInput } from './link/mac-header.ts';
 export {
   overhear,

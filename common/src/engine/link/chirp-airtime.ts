@@ -59,3 +59,21 @@ export function chirpAirtimeS(input: ChirpInput): number {
   const payloadSymbols = 8 + Math.max(Math.ceil(bits / bitsPerBlock) * (codingRate + 4), 0);
   return ((preambleSymbols + 4.25 + payloadSymbols) * 2 ** spreadingFactor) / bandwidthHz;
 }
+
+/**
+ * PHY payload of an uplink of the common public network protocol: header 1, address 4, control 1, counter 2, options, port 1,
+ * application's octets, integrity code 4.
+ *
+ * Source: LoRaWAN 1.0.x frame format (from memory).
+ *
+ * @param applicationOctets The application's payload, octets; whole, 0 or more.
+ * @param optionOctets Frame options; whole, 0 to 15, default 0.
+ * @returns PHY payload, octets.
+ * @throws OutOfRangeError code `out-of-range` for octets outside their range.
+ * @example networkPayloadOctets(24) // 37
+ */
+export function networkPayloadOctets(applicationOctets: number, optionOctets = 0): number {
+  requireNumber(applicationOctets, { field: 'applicationOctets', min: 0, whole: true, unit: 'octets' });
+  requireNumber(optionOctets, { field: 'optionOctets', min: 0, max: 15, whole: true, unit: 'octets' });
+  return 1 + 4 + 1 + 2 + optionOctets + 1 + applicationOctets + 4;
+}
