@@ -3,7 +3,8 @@ import { assemblePlan, phaseOf } from './assemble-plan.ts';
 import { exchangeAirtime } from './exchange-airtime.ts';
 import type { ExchangePlan } from './exchange-plan.types.ts';
 import type { PlanContext } from './plan-context.ts';
-import { AIRTIME, planFrame, planUnacknowledged } from './plan-frame.ts';
+import { AIRTIME } from './plan-exchange.ts';
+import { planAcknowledged, planFrame, planUnacknowledged } from './plan-sent.ts';
 
 /**
  * Everything that an exchange step comes to: what the radio does for how long, on average and at worst, frame octet by octet,
@@ -20,6 +21,8 @@ export function exchangePlan(exchange: ExchangeDuration, link: LinkSettings): Ex
   switch (exchange.pattern) {
     case 'frame':
       return planFrame({ ...own, exchange });
+    case 'acknowledged':
+      return planAcknowledged({ ...own, exchange });
     case 'unacknowledged':
       return planUnacknowledged({ ...own, exchange });
     default:

@@ -63,7 +63,6 @@ describe('stepDuration: exchange', () => {
   });
 
   const partlyCounted: [ExchangePattern, number][] = [
-    [{ pattern: 'acknowledged', psduOctets: 50 }, 50],
     [{ pattern: 'listen-before-talk', psduOctets: 50, channels: 2, retuneS: 0.001 }, 50],
     [{ pattern: 'poll', pendingProbability: { typical: 0.1 } }, 12],
     [{ pattern: 'poll', dataRequestOctets: 18, pendingProbability: { typical: 0.1 } }, 18],
