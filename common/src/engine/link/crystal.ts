@@ -17,7 +17,7 @@ export interface CrystalTolerance {
 
 /** Most that a PHY allows its symbol rate and centre frequency to be off, ± ppm. */
 const PHY_LIMIT_PPM = 40;
-const PHY_LIMIT_SOURCE = 'IEEE 802.15.4-2006 6.5.3 and 6.9; the same figure in 802.15.4c-2009 6.6a.3.3';
+const PHY_LIMIT_SOURCE = 'IEEE 802.15.4; printed in 802.15.4c-2009 6.6a.3.3';
 
 /**
  * Total tolerance of a crystal in the worst case: make, temperature, ageing and load mismatch add up.
@@ -60,8 +60,9 @@ function pulledPpm(pulling: NonNullable<Crystal['pulling']>): number {
 /**
  * Most that a PHY's symbol rate and centre frequency may be off.
  *
- * Source: IEEE 802.15.4-2006 6.5.3 and 6.9 (clause numbers from memory), printed in 802.15.4c-2009 6.6a.3.3 and in a public
- * conformance test of the 2450 MHz PHY (96.2 kHz at 2405 MHz). For MSK, SUN FSK and a PHY of one's own no source was found.
+ * Source: IEEE 802.15.4c-2009 6.6a.3.3 (O-QPSK symbol rate); a public conformance test of the 2450 MHz PHY (centre frequency,
+ * 96.2 kHz at 2405 MHz). The same figure for BPSK, 802.15.4-2006 6.6.3, is from memory. For MSK, SUN FSK and a PHY of one's
+ * own no source was found.
  *
  * @param phy Preset id or a PHY of one's own.
  * @returns ± ppm, or null where no source gives a limit.
