@@ -1,7 +1,7 @@
 import { describe, expect, test } from 'vitest';
 import { OutOfRangeError } from '#common/errors.ts';
 import { errorOf } from '#test/support/build-node.ts';
-import { chirpAirtimeS, isLowDataRate } from './chirp-airtime.ts';
+import { chirpAirtimeS, isLowDataRate, networkPayloadOctets } from './chirp-airtime.ts';
 
 const frame = {
   spreadingFactor: 7,
@@ -45,5 +45,15 @@ describe('isLowDataRate', () => {
       true,
       false,
     ]);
+  });
+});
+
+describe('networkPayloadOctets', () => {
+  test('adds 13 octets and the options to the payload of the application', () => {
+    expect([networkPayloadOctets(24), networkPayloadOctets(24, 3)]).toEqual([37, 40]);
+  });
+
+  test('throws for more than 15 octets of options', () => {
+    expect(errorOf(OutOfRangeError, () => networkPayloadOctets(0, 16)).field).toBe('optionOctets');
   });
 });
