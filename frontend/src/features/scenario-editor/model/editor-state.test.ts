@@ -115,7 +115,7 @@ function routineEdit(scenario: Scenario, [operation, a, b]: Picks): Scenario {
   const part = pick(scenario.node.parts, b);
   const places = (b % 5) - 2;
   const kinds = ['every', 'random', 'window', 'once', 'always'] as const;
-  const durations = ['fixed', 'airtime', 'serial'] as const;
+  const durations = ['fixed', 'exchange', 'serial'] as const;
   const operations: (() => Scenario)[] = [
     () => addRoutine(scenario, emptyRoutine('Report')),
     () => duplicateRoutine(scenario, routine.id),

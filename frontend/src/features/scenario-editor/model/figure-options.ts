@@ -41,3 +41,12 @@ export const ACTIVATION: ParseOptions = { dimension: 'molar-energy', defaultUnit
 export const MASS: ParseOptions = { dimension: 'mass', defaultUnit: 'g', above: 0 };
 export const VOLUME: ParseOptions = { dimension: 'volume', defaultUnit: 'cm³', above: 0 };
 export const PRICE: ParseOptions = { dimension: 'number', min: 0 };
+export const LEVEL: ParseOptions = { dimension: 'level', defaultUnit: 'dBm', min: -200, max: 60 };
+export const LEVEL_STEP: ParseOptions = { dimension: 'number', min: 0, max: 20 };
+export const TOLERANCE: ParseOptions = { dimension: 'tolerance', defaultUnit: 'ppm', min: 0 };
+export const PROBABILITY: ParseOptions = { dimension: 'share', defaultUnit: '%', min: 0, max: 1 };
+export const BIT_RATE: ParseOptions = { dimension: 'bit-rate', defaultUnit: 'kbit/s', above: 0 };
+export const CRYSTAL_CAPACITANCE: ParseOptions = { dimension: 'capacitance', defaultUnit: 'pF', above: 0 };
+export const SHUNT_CAPACITANCE: ParseOptions = { dimension: 'capacitance', defaultUnit: 'pF', min: 0 };
+/** A count between two limits, such as the exponent of a backoff. */
+export const countOf = (min: number, max: number): ParseOptions => ({ dimension: 'number', min, max, whole: true });

@@ -10,6 +10,8 @@ import { PlainText } from './bound-fields.tsx';
 export interface Choice<T extends string> {
   value: T;
   label: string;
+  /** Heading that it stands under in the list; neighbours with the same one stand together. */
+  group?: string;
 }
 
 interface ChoiceFieldProps<T extends string> {
@@ -53,11 +55,7 @@ export function ChoiceField<T extends string>(props: ChoiceFieldProps<T>) {
         onChange={(event) => handleChange(event.target.value)}
         className={`${isCell ? CELL : LINE} ${isCell && value === '' ? 'text-muted' : ''}`}
       >
-        {choices.map((choice) => (
-          <option key={choice.value} value={choice.value}>
-            {choice.label}
-          </option>
-        ))}
+        <Options choices={choices} />
       </select>
       {isCell ? (
         problem !== undefined && (
@@ -75,6 +73,26 @@ export function ChoiceField<T extends string>(props: ChoiceFieldProps<T>) {
       )}
     </div>
   );
+}
+
+function Options({ choices }: { choices: readonly Choice<string>[] }) {
+  const groups = [...new Set(choices.map(({ group }) => group))];
+  return groups.map((group) => {
+    const options = choices
+      .filter((choice) => choice.group === group)
+      .map((choice) => (
+        <option key={choice.value} value={choice.value}>
+          {choice.label}
+        </option>
+      ));
+    return group === undefined ? (
+      options
+    ) : (
+      <optgroup key={group} label={group} className="bg-raised text-ink">
+        {options}
+      </optgroup>
+    );
+  });
 }
 
 const OPTIONS = '[&>option]:bg-raised [&>option]:text-ink';

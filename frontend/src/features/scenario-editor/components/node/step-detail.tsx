@@ -1,23 +1,22 @@
-import type { Duration, ExchangeDuration, PhyId, Routine, Step } from '#common/engine/scenario/scenario.types.ts';
-import { phyPresets } from '#common/engine/link/phy.table.ts';
+import type { Duration, Routine, Step } from '#common/engine/scenario/scenario.types.ts';
 import { useDocument, useFieldProblem } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
 import { CLOCK, OCTETS, POSITIVE_NUMBER, STEP_TIME } from '#frontend/features/scenario-editor/model/figure-options.ts';
+import { onExchange } from '#frontend/features/scenario-editor/model/operations/exchange-operations.ts';
 import { durationOfKind, updateStep } from '#frontend/features/scenario-editor/model/operations/routine-operations.ts';
 import { withOptional } from '#frontend/features/scenario-editor/model/operations/supply-operations.ts';
 import { FigureField } from '../fields/bound-fields.tsx';
 import { ChoiceField } from '../fields/choice-field.tsx';
 import { QuantityField } from '../fields/quantity-fields.tsx';
+import { ExchangeBuilder } from '../link/exchange-builder.tsx';
 import { derivedText } from './duration-cell.tsx';
 
-type Kind = 'fixed' | 'airtime' | 'serial';
+type Kind = Duration['kind'];
 
 const KINDS: readonly { value: Kind; label: string }[] = [
   { value: 'fixed', label: 'typed' },
-  { value: 'airtime', label: 'airtime of a frame' },
+  { value: 'exchange', label: 'derived from the link' },
   { value: 'serial', label: 'serial transfer' },
 ];
-
-const kindOfDuration = ({ kind }: Duration): Kind => (kind === 'exchange' ? 'airtime' : kind);
 
 interface DetailProps {
   routine: Routine;
@@ -45,9 +44,11 @@ export function StepDetail({ routine, step }: DetailProps) {
           field={`${field}.kind`}
           label="Duration"
           editLabel={`duration of ${step.name}`}
-          value={kindOfDuration(duration)}
+          value={duration.kind}
           choices={KINDS}
-          change={(document, kind) => change(() => durationOfKind(kind))(document)}
+          change={(document, kind) =>
+            change((before) => (before.kind === kind ? before : durationOfKind(kind, document.node.link)))(document)
+          }
         />
         {duration.kind === 'fixed' && (
           <div className="col-span-full sm:col-span-3">
@@ -67,10 +68,18 @@ export function StepDetail({ routine, step }: DetailProps) {
           <SerialFields field={field} stepName={step.name} duration={duration} change={change} />
         )}
         {duration.kind === 'exchange' && (
-          <AirtimeFields field={field} stepName={step.name} duration={duration} change={change} />
+          <ExchangeBuilder
+            key={step.id}
+            routineId={routine.id}
+            stepId={step.id}
+            field={field}
+            stepName={step.name}
+            exchange={duration}
+            change={(document, apply) => change(onExchange(apply))(document)}
+          />
         )}
       </div>
-      {duration.kind !== 'fixed' && <Derived field={field} step={step} />}
+      {duration.kind === 'serial' && <Derived field={field} step={step} />}
     </section>
   );
 }
@@ -129,72 +138,4 @@ function SerialFields({ field, stepName, duration, change }: FieldsProps<Extract
       }
     />
   ));
-}
-
-const PHYS: readonly { value: PhyId | 'node'; label: string }[] = [
-  { value: 'node', label: 'that of the node' },
-  ...Object.values(phyPresets).flatMap(({ id }) => (id === 'custom' ? [] : [{ value: id, label: id }])),
-];
-
-function AirtimeFields({ field, stepName, duration, change }: FieldsProps<ExchangeDuration>) {
-  const phy = duration.link?.phy;
-  const hasSize = 'psduOctets' in duration || 'payloadOctets' in duration || duration.pattern === 'frame';
-  return (
-    <>
-      <ChoiceField
-        field={`${field}.link.phy`}
-        label="PHY"
-        editLabel={`PHY of ${stepName}`}
-        value={typeof phy === 'string' ? phy : 'node'}
-        choices={PHYS}
-        change={(document, chosen) =>
-          change((before) =>
-            before.kind === 'exchange'
-              ? {
-                  ...before,
-                  link: withOptional(before.link ?? {}, 'phy', chosen === 'node' ? undefined : chosen),
-                }
-              : before,
-          )(document)
-        }
-      />
-      {hasSize && (
-        <>
-          <SizeField size="payloadOctets" label="Payload" {...{ field, stepName, duration, change }} />
-          <SizeField size="psduOctets" label="or whole frame (PSDU)" {...{ field, stepName, duration, change }} />
-        </>
-      )}
-    </>
-  );
-}
-
-interface SizeProps extends FieldsProps<ExchangeDuration> {
-  size: 'payloadOctets' | 'psduOctets';
-  label: string;
-}
-
-/** One of the two sizes gives the other: setting one takes the other away. */
-function SizeField({ size, label, field, stepName, duration, change }: SizeProps) {
-  const value: unknown = Reflect.get(duration, size);
-  return (
-    <FigureField
-      field={`${field}.${size}`}
-      label={label}
-      hint={size === 'payloadOctets' ? 'an octet is a byte' : 'FCS included'}
-      editLabel={`${label.toLowerCase()} of ${stepName}`}
-      value={typeof value === 'number' ? value : undefined}
-      options={OCTETS}
-      isOptional
-      change={(document, octets) => change((before) => withSize(before, size, octets))(document)}
-    />
-  );
-}
-
-function withSize(duration: Duration, size: SizeProps['size'], octets: number | undefined): Duration {
-  if (duration.kind !== 'exchange') return duration;
-  if (duration.pattern === 'frame' || duration.pattern === 'acknowledged' || duration.pattern === 'unacknowledged') {
-    const { payloadOctets: _payload, psduOctets: _psdu, ...others } = duration;
-    return { ...others, ...(octets === undefined ? {} : { [size]: octets }) };
-  }
-  return duration;
 }

@@ -1,8 +1,16 @@
-import type { Duration, Routine, Scenario, Schedule, Step } from '#common/engine/scenario/scenario.types.ts';
+import type {
+  Duration,
+  LinkSettings,
+  Routine,
+  Scenario,
+  Schedule,
+  Step,
+} from '#common/engine/scenario/scenario.types.ts';
 import { LIMITS } from '#common/schemas/limits.ts';
 import { uniqueId, uniqueName } from '../ids.ts';
 import { insertAt, moveBy, updateById } from '../list.ts';
 import { withoutDanglingReferences } from '../references.ts';
+import { newExchange } from './exchange-operations.ts';
 import { updateNode } from './part-operations.ts';
 
 function withRoutines(scenario: Scenario, change: (routines: Routine[]) => Routine[]): Scenario {
@@ -103,12 +111,12 @@ export function scheduleOfKind(kind: Schedule['kind'], previous: Schedule): Sche
 }
 
 /** Another kind of duration with its usual figures. */
-export function durationOfKind(kind: 'fixed' | 'airtime' | 'serial'): Duration {
+export function durationOfKind(kind: Duration['kind'], nodeLink?: LinkSettings): Duration {
   switch (kind) {
     case 'fixed':
       return { kind: 'fixed', typical: 0.001, provenance: { kind: 'assumed' } };
-    case 'airtime':
-      return { kind: 'exchange', pattern: 'frame', payloadOctets: 24, link: { phy: 'oqpsk-2450' } };
+    case 'exchange':
+      return newExchange(nodeLink);
     case 'serial':
       return { kind: 'serial', octets: 8, clockHz: 400_000 };
   }
