@@ -5,6 +5,13 @@ export type * from './forecast/forecast.types.ts';
 
 // link
 export {
+  acknowledgedExchange,
+  unacknowledgedExchange,
+  type AcknowledgedExchangeInput,
+  type UnacknowledgedExchange,
+  type UnacknowledgedExchangeInput,
+} from './link/acknowledged-exchange.ts';
+export {
   ADVERTISING_INTERVAL_UNIT_S,
   ADVERTISING_SPACE_S,
   advertisingEvent,
