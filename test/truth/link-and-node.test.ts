@@ -17,6 +17,7 @@ describeTruth('mac-core-header.json', evaluators);
 describeTruth('mac-performance-test.json', evaluators);
 describeTruth('mote-manual.json', evaluators);
 describeTruth('node-blog.json', evaluators);
+describeTruth('ns-3-error-model.json', evaluators);
 describeTruth('ns-3-lorawan.json', evaluators);
 describeTruth('ns-3.json', evaluators);
 describeTruth('openthread.json', evaluators);

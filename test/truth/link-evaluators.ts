@@ -1,6 +1,7 @@
 import { flagInput, numberInput, textInput } from '#test/support/truth.ts';
 import type { TruthEvaluator, TruthRow } from '#test/support/truth.ts';
 import {
+  acknowledgedExchange,
   ADVERTISING_INTERVAL_UNIT_S,
   ADVERTISING_SPACE_S,
   advertisingEvent,
@@ -16,12 +17,11 @@ import {
   phyLimitPpm,
   phyPresets,
   scannableEvent,
+  unacknowledgedExchange,
 } from '#common/engine/index.ts';
 import type { AddressMode, AdvertisingPhy, MacHeaderInput, Phy } from '#common/engine/index.ts';
+import { announcedWait, linkExchangeEvaluators } from './link-exchange-evaluators.ts';
 import { linkTimingEvaluators } from './link-timing-evaluators.ts';
-
-/** Mean backoff of an idle channel with the default exponent of 3, in units: (2³ − 1)/2. */
-const MEAN_BACKOFF_UNITS = 3.5;
 
 function presetOf(row: TruthRow): Phy {
   if (row.id.startsWith('phy-msk')) return phyPresets['msk-2450'];
@@ -52,6 +52,8 @@ const macValues: [string, (phy: Phy, row: TruthRow) => number | null][] = [
   ['mac-ackwait-', (phy) => phy.ackWaitS],
   ['mac-sifs-', (phy) => phy.sifsS],
   ['mac-lifs-', (phy) => phy.lifsS],
+  ['mac-maxframetotalwait-', announcedWait],
+  ['mac-maxframeresponsetime-', (phy, row) => numberInput(row, 'symbols') * phy.macSymbolS],
   ['mac-ifs-select-', (phy, row) => interframeSpaceS(phy, numberInput(row, 'mpduOctets'))],
 ];
 
@@ -172,13 +174,13 @@ const ble: TruthEvaluator = (row) => {
 };
 
 /** Time of an exchange on an idle channel; the model of the 2006 paper counts the backoff alone before the frame. */
-function exchangeS(row: TruthRow, phy: Phy, psduOctets: number): number | null {
-  const { turnaroundS, ccaS, unitBackoffS } = phy;
-  if (turnaroundS === null || ccaS === null || unitBackoffS === null) return null;
-  const backoffS = MEAN_BACKOFF_UNITS * unitBackoffS;
-  const accessS = textInput(row, 'accessModel') === 'backoffOnly' ? backoffS : backoffS + ccaS + turnaroundS;
-  const ackS = flagInput(row, 'ack') ? turnaroundS + frameAirtimeS(phy, 5) : 0;
-  return accessS + frameAirtimeS(phy, psduOctets) + ackS + interframeSpaceS(phy, psduOctets);
+function exchangeS(row: TruthRow, phy: Phy, psduOctets: number): number {
+  const input = { psduOctets, busyProbability: 0, frameErrorRate: 0, includeInterframeSpace: true };
+  const exchange = flagInput(row, 'ack')
+    ? acknowledgedExchange(phy, { ...input, ackErrorRate: 0 })
+    : unacknowledgedExchange(phy, input);
+  const { meanDurationS, assessmentS, turnaroundS } = exchange;
+  return textInput(row, 'accessModel') === 'backoffOnly' ? meanDurationS - assessmentS - turnaroundS : meanDurationS;
 }
 
 const throughput: TruthEvaluator = (row) => {
@@ -192,13 +194,14 @@ const throughput: TruthEvaluator = (row) => {
     panIdCompression: false,
   });
   const delayS = exchangeS(row, phy, headerOctets + numberInput(row, 'addressOctets') + payloadOctets + 2);
-  if (delayS === null || row.id.startsWith('latre-delay')) return delayS;
+  if (row.id.startsWith('latre-delay')) return delayS;
   const rateBps = (8 * payloadOctets) / delayS;
   return row.id.startsWith('latre-rate') ? rateBps : rateBps / phy.bitRateBps;
 };
 
 /** How the rows of the link's groups are computed by the engine. */
 export const linkEvaluators: Readonly<Record<string, TruthEvaluator>> = {
+  ...linkExchangeEvaluators,
   ...linkTimingEvaluators,
   phy: (row) =>
     row.id.startsWith('phy-centre-frequency-')
