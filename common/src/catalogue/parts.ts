@@ -86,6 +86,28 @@ const PARTS: readonly Part[] = [
     ),
   },
   {
+    id: 'transceiver-2450-connectionless',
+    name: 'Transceiver 2.4 GHz, connectionless advertising',
+    kind: 'radio',
+    restStateId: 'sleep',
+    lowestVoltageV: voltage('1.8 V'),
+    states: radioStates(
+      {
+        sleep: '0.1 … 0.4 … 2 µA',
+        idle: '0.3 … 0.4 … 0.7 mA',
+        synthesiser: '2 … 2.5 … 4 mA',
+        listen: '4.5 … 5.5 … 7 mA',
+        receive: '4.5 … 5.5 … 7 mA',
+        transmit: '4.5 … 5.3 … 8 mA',
+      },
+      'Transmit at 0 dBm',
+    ),
+    transitions: radioMoves(
+      move('sleep', 'idle', '0.3 … 0.4 … 1.5 ms', '0.4 mA'),
+      move('idle', 'synthesiser', '30 … 60 … 140 µs', '2 mA'),
+    ),
+  },
+  {
     id: 'transceiver-868',
     name: 'Transceiver below 1 GHz',
     kind: 'radio',

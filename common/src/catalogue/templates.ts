@@ -1,44 +1,25 @@
-import type {
-  Climate,
-  Node,
-  Provenance,
-  Quantity,
-  Routine,
-  Scenario,
-  Step,
-  Supply,
-  Target,
-} from '#common/engine/scenario/scenario.types.ts';
+import type { Node, Routine, Scenario } from '#common/engine/scenario/scenario.types.ts';
 import { InconsistentInputError } from '#common/errors.ts';
 import { scenarioSchema } from '#common/schemas/scenario.schema.ts';
 import { fromUnit } from '#common/units/unit-lookup.ts';
-import { catalogueCell, catalogueClimate, cataloguePart } from './catalogue.ts';
-import { typedFigure } from './typed-figure.ts';
+import { cataloguePart } from './catalogue.ts';
+import { EXCHANGE_TEMPLATES } from './exchange-templates.table.ts';
+import { boardLeakage, fixed, orchard, supply, target } from './template-pieces.ts';
+
+/** Groups of templates, in the order in which they are offered. */
+export const TEMPLATE_GROUPS = [
+  { id: 'plain', name: 'Empty, or with typed times' },
+  { id: 'link', name: 'Times on the air derived from the link' },
+] as const;
 
 /** A scenario to start from. */
 export interface ScenarioTemplate {
   id: string;
   name: string;
   description: string;
+  group: (typeof TEMPLATE_GROUPS)[number]['id'];
   document: Scenario;
 }
-
-const EXAMPLE: Provenance = { kind: 'assumed', text: 'Example figure of a template' };
-const LEAKAGE: Quantity = typedFigure('current', '… 0.2 … 1 µA', EXAMPLE);
-
-const fixed = (time: string): Step['duration'] => ({ kind: 'fixed', ...typedFigure('duration', time, EXAMPLE) });
-
-const orchard = (startMonth: number): Climate => ({ ...catalogueClimate('oceanic-orchard'), startMonth });
-
-const target = (years: number): Target => ({ lifeS: fromUnit(years, 'y'), confidence: 0.9 });
-
-const supply = (designation: string, series: number): Supply => ({
-  cell: catalogueCell(designation),
-  series,
-  parallel: 1,
-  regulator: { kind: 'none' },
-  reserveFraction: 0,
-});
 
 const reportingNode = (): Node => ({
   parts: [
@@ -46,7 +27,7 @@ const reportingNode = (): Node => ({
     cataloguePart('transceiver-2450', 'radio'),
     cataloguePart('sensor-temperature-humidity', 'sensor'),
   ],
-  leakages: [{ id: 'board', name: 'Board leakage', current: LEAKAGE }],
+  leakages: [boardLeakage()],
   link: { phy: 'oqpsk-2450' },
   routines: [
     {
@@ -106,7 +87,7 @@ const eventNode = (): Node => ({
     cataloguePart('transceiver-868', 'radio'),
     cataloguePart('switch-contact', 'contact'),
   ],
-  leakages: [{ id: 'board', name: 'Board leakage', current: LEAKAGE }],
+  leakages: [boardLeakage()],
   link: { phy: 'sun-fsk-50' },
   routines: [
     eventRoutine,
@@ -133,7 +114,7 @@ const longRangeNode = (): Node => ({
     cataloguePart('transceiver-chirp', 'radio'),
     cataloguePart('sensor-temperature-humidity', 'sensor'),
   ],
-  leakages: [{ id: 'board', name: 'Board leakage', current: LEAKAGE }],
+  leakages: [boardLeakage()],
   routines: [
     {
       id: 'report',
@@ -177,6 +158,7 @@ const TEMPLATES: readonly ScenarioTemplate[] = [
     id: 'empty',
     name: 'Empty',
     description: 'No parts and no routines yet; two LR6 in an oceanic orchard.',
+    group: 'plain',
     document: {
       schemaVersion: 1,
       name: 'New scenario',
@@ -190,6 +172,7 @@ const TEMPLATES: readonly ScenarioTemplate[] = [
     id: 'reporting-sensor',
     name: 'Reporting sensor',
     description: 'Measures and reports every 15 min over a 2.4 GHz IEEE 802.15.4 radio; two LR6.',
+    group: 'plain',
     document: {
       schemaVersion: 1,
       name: 'Reporting sensor',
@@ -203,6 +186,7 @@ const TEMPLATES: readonly ScenarioTemplate[] = [
     id: 'event-counter',
     name: 'Event counter',
     description: 'Reports each closing of a contact, 140 a day in the mean, below 1 GHz; one CR17345.',
+    group: 'plain',
     document: {
       schemaVersion: 1,
       name: 'Event counter',
@@ -217,6 +201,7 @@ const TEMPLATES: readonly ScenarioTemplate[] = [
     name: 'Long-range reporter',
     description:
       'Measures and reports every hour by chirp spread spectrum, with a window to be answered in; one ER34615.',
+    group: 'plain',
     document: {
       schemaVersion: 1,
       name: 'Long-range reporter',
@@ -226,6 +211,7 @@ const TEMPLATES: readonly ScenarioTemplate[] = [
       target: target(8),
     },
   },
+  ...EXCHANGE_TEMPLATES,
 ];
 
 /**

@@ -1,8 +1,8 @@
 import { zodResolver } from '@hookform/resolvers/zod';
-import { useState } from 'react';
-import { useForm } from 'react-hook-form';
+import { useId, useState } from 'react';
+import { useForm, type UseFormRegisterReturn } from 'react-hook-form';
 import { z } from 'zod';
-import { scenarioTemplates } from '#common/catalogue/templates.ts';
+import { scenarioTemplates, TEMPLATE_GROUPS, type ScenarioTemplate } from '#common/catalogue/templates.ts';
 import { nameSchema } from '#common/schemas/api/common.ts';
 import type { ScenarioDetail } from '#common/schemas/api/scenarios.ts';
 import { Button } from '#frontend/components/button.tsx';
@@ -52,22 +52,13 @@ export function CreateScenarioDialog({ projectId, onClose, onCreated }: CreateSc
         />
         <fieldset className="mt-3">
           <legend className="text-small text-muted">Begin with</legend>
-          {choices.map((choice) => (
-            <label
-              key={choice.id}
-              className="flex cursor-pointer items-baseline gap-3 border-b border-hair py-2.5 hover:bg-accent-soft"
-            >
-              <input
-                type="radio"
-                value={choice.id}
-                className="translate-y-0.5 accent-[var(--accent)]"
-                {...register('startId')}
-              />
-              <span>
-                <span className="block font-semibold">{choice.name}</span>
-                <span className="block text-small text-muted">{choice.description}</span>
-              </span>
-            </label>
+          {TEMPLATE_GROUPS.map((group) => (
+            <TemplateGroup
+              key={group.id}
+              name={group.name}
+              choices={choices.filter((choice) => choice.group === group.id)}
+              field={register('startId')}
+            />
           ))}
         </fieldset>
         <DialogActions>
@@ -78,5 +69,34 @@ export function CreateScenarioDialog({ projectId, onClose, onCreated }: CreateSc
         </DialogActions>
       </form>
     </Dialog>
+  );
+}
+
+interface TemplateGroupProps {
+  name: string;
+  choices: readonly ScenarioTemplate[];
+  field: UseFormRegisterReturn;
+}
+
+function TemplateGroup({ name, choices, field }: TemplateGroupProps) {
+  const headingId = useId();
+  return (
+    <div role="group" aria-labelledby={headingId} className="mt-3">
+      <p id={headingId} className="border-b border-line pb-1 text-small font-bold">
+        {name}
+      </p>
+      {choices.map((choice) => (
+        <label
+          key={choice.id}
+          className="flex cursor-pointer items-baseline gap-3 border-b border-hair py-2.5 hover:bg-accent-soft"
+        >
+          <input type="radio" value={choice.id} className="translate-y-0.5 accent-[var(--accent)]" {...field} />
+          <span>
+            <span className="block font-semibold">{choice.name}</span>
+            <span className="block text-small text-muted">{choice.description}</span>
+          </span>
+        </label>
+      ))}
+    </div>
   );
 }
