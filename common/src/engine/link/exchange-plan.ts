@@ -1,10 +1,12 @@
 import type { ExchangeDuration, LinkSettings } from '../scenario/scenario.types.ts';
-import { assemblePlan, phaseOf } from './assemble-plan.ts';
-import { exchangeAirtime } from './exchange-airtime.ts';
 import type { ExchangePlan } from './exchange-plan.types.ts';
 import type { PlanContext } from './plan-context.ts';
-import { AIRTIME } from './plan-exchange.ts';
-import { planAcknowledged, planFrame, planUnacknowledged } from './plan-sent.ts';
+import { planAdvertising, planChirp } from './plan-other-links.ts';
+import { planPoll } from './plan-poll.ts';
+import { planForward, planOverhear, planReceive, planScan } from './plan-received.ts';
+import { planAcknowledged, planFrame, planListenBeforeTalk, planUnacknowledged } from './plan-sent.ts';
+import { planSlot } from './plan-slot.ts';
+import { planBeacon, planGuard, planSampledListener, planSampledSender } from './plan-timed.ts';
 
 /**
  * Everything that an exchange step comes to: what the radio does for how long, on average and at worst, frame octet by octet,
@@ -25,23 +27,48 @@ export function exchangePlan(exchange: ExchangeDuration, link: LinkSettings): Ex
       return planAcknowledged({ ...own, exchange });
     case 'unacknowledged':
       return planUnacknowledged({ ...own, exchange });
+    case 'listen-before-talk':
+      return planListenBeforeTalk({ ...own, exchange });
+    case 'poll':
+      return planPoll({ ...own, exchange });
+    case 'slot':
+      return planSlot({ ...own, exchange });
+    case 'chirp':
+      return planChirp({ ...own, exchange });
+    case 'advertising':
+      return planAdvertising({ ...own, exchange });
     default:
-      return planAirtime({ ...own, exchange });
+      return receivingPlan(exchange, own);
   }
 }
 
-function planAirtime(context: PlanContext): ExchangePlan {
-  const { airtimeS, notCounted } = exchangeAirtime(context.exchange, context.link);
-  if (notCounted !== null) {
-    const message = `This step (${context.exchange.pattern}) counts the airtime of its main frame only. Not counted: ${notCounted}.`;
-    context.cautions.push({ code: 'link-airtime-only', message, field: '' });
+/** Patterns that receive, wait for frames or wake a receiver; apart only so that neither choice grows too long. */
+function receivingPlan(
+  exchange: Exclude<
+    ExchangeDuration,
+    {
+      pattern:
+        'frame' | 'acknowledged' | 'unacknowledged' | 'listen-before-talk' | 'poll' | 'slot' | 'chirp' | 'advertising';
+    }
+  >,
+  own: Omit<PlanContext, 'exchange'>,
+): ExchangePlan {
+  switch (exchange.pattern) {
+    case 'beacon':
+      return planBeacon({ ...own, exchange });
+    case 'guard':
+      return planGuard({ ...own, exchange });
+    case 'sampled-listener':
+      return planSampledListener({ ...own, exchange });
+    case 'sampled-sender':
+      return planSampledSender({ ...own, exchange });
+    case 'receive':
+      return planReceive({ ...own, exchange });
+    case 'forward':
+      return planForward({ ...own, exchange });
+    case 'overhear':
+      return planOverhear({ ...own, exchange });
+    case 'scan':
+      return planScan({ ...own, exchange });
   }
-  return assemblePlan(context, {
-    phases: [phaseOf('frame', { meanS: airtimeS, worstS: airtimeS }, AIRTIME)],
-    frame: null,
-    deliveredProbability: null,
-    payloadOctets: null,
-    onAirMeanS: airtimeS,
-    onAirWorstS: airtimeS,
-  });
 }

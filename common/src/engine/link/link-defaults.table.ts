@@ -34,3 +34,12 @@ export const standardFrame = {
 
 /** Source of the standard frame's choice. */
 export const STANDARD_FRAME_SOURCE = 'common practice: version 2006, short addresses, PAN compression';
+
+/** Tolerance of a clock that none is given for, ± ppm. */
+export const assumedTolerancePpm = 40;
+/** Source of that tolerance. */
+export const ASSUMED_TOLERANCE_SOURCE =
+  'the most that IEEE 802.15.4-2006 6.5.3 and 6.9 allow; that it is used up: common practice, no source';
+
+/** Time since a sampling listener was last heard, where a sender knows its phase, s. */
+export const assumedSinceHeardS = 60;

@@ -17,6 +17,9 @@ export interface PlanContext<E extends ExchangeDuration = ExchangeDuration> {
   figures: ExchangeFigure[];
 }
 
+/** Context of the plan of a pattern. */
+export type PlanOf<P extends ExchangeDuration['pattern']> = PlanContext<Extract<ExchangeDuration, { pattern: P }>>;
+
 /**
  * The PHY of a plan.
  *

@@ -46,6 +46,8 @@ export interface ExchangeTimes extends ExchangeParts {
   worst: ExchangeParts;
   longestBackoffS: number;
   frameS: number;
+  /** One change of channel, s; default: none. */
+  oneRetuneS?: number;
 }
 
 /** Origins of the phases of an exchange: N accesses, R retries, c access failure, p acknowledged. */
@@ -75,9 +77,9 @@ export function exchangePhases({ link }: PlanContext, phy: Phy, exchange: Exchan
   const turnaroundS = phyConstant(phy, 'turnaroundS');
   const turnaround = { formula: '(1 − c) · N · aTurnaroundTime', source: phy.sources.turnaroundS };
   const longestWaitS = worst.acknowledgementWaitS / attempts;
-  const { retuneS } = exchange;
+  const { retuneS, oneRetuneS } = exchange;
   const access = [
-    phaseOf('retune', { meanS: retuneS, worstS: worst.retuneS }, ORIGINS.retune),
+    phaseOf('retune', { meanS: retuneS, worstS: worst.retuneS, longestS: oneRetuneS }, ORIGINS.retune),
     phaseOf(
       'backoff',
       {

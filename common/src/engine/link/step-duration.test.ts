@@ -1,7 +1,9 @@
 import { describe, expect, test } from 'vitest';
 import { InconsistentInputError, OutOfRangeError } from '#common/errors.ts';
+import { everyPattern } from '#test/support/arbitrary-exchange.ts';
 import { errorOf } from '#test/support/build-node.ts';
 import type { Duration, ExchangePattern, LinkSettings, Step } from '../scenario/scenario.types.ts';
+import { exchangePlan } from './exchange-plan.ts';
 import { stepDuration } from './step-duration.ts';
 
 const step = (duration: Duration, repeats?: number): Step => ({
@@ -62,48 +64,24 @@ describe('stepDuration: exchange', () => {
     expect(meanS).toBe((6 + 9 + 5 + 20 + 4 + 2) * 32e-6);
   });
 
-  const partlyCounted: [ExchangePattern, number][] = [
-    [{ pattern: 'listen-before-talk', psduOctets: 50, channels: 2, retuneS: 0.001 }, 50],
-    [{ pattern: 'poll', pendingProbability: { typical: 0.1 } }, 12],
-    [{ pattern: 'poll', dataRequestOctets: 18, pendingProbability: { typical: 0.1 } }, 18],
-    [{ pattern: 'slot', slotUse: 'transmit', psduOctets: 69 }, 69],
-    [{ pattern: 'sampled-sender', periodUnits: 100, psduOctets: 40 }, 40],
-  ];
-  test.each(partlyCounted)('counts the main frame of %o and remarks what is not counted', (pattern, octets) => {
-    const { meanS, remarks } = stepDuration(exchange(pattern), nodeLink, path);
-    expect(meanS).toBe((6 + octets) * 32e-6);
-    expect(remarks).toEqual([expect.objectContaining({ code: 'link-airtime-only', path: `${path}.duration` })]);
-  });
+  test.each(everyPattern)(
+    'is the mean of the plan times the repeats, cautions at their paths (%#, $pattern)',
+    (pattern) => {
+      const { meanS, cautions } = exchangePlan({ kind: 'exchange', ...pattern }, nodeLink);
+      const duration = stepDuration({ ...exchange(pattern), repeats: 3 }, nodeLink, path);
+      expect(duration.meanS).toBe(meanS * 3);
+      expect(duration.remarks.map(({ code }) => code)).toEqual(cautions.map(({ code }) => code));
+    },
+  );
 
-  test('computes a chirp frame with 8 preamble symbols, header and CRC, and remarks receive windows only', () => {
-    const chirp = {
-      pattern: 'chirp',
-      spreadingFactor: 7,
-      bandwidthHz: 125_000,
-      codingRate: 1,
-      payloadOctets: 10,
-    } as const;
-    expect(stepDuration(exchange(chirp))).toMatchObject({ meanS: 0.041216, remarks: [] });
-    const { remarks } = stepDuration(exchange({ ...chirp, receiveWindows: [{ delayS: 1, openS: 0.03 }] }));
-    expect(remarks[0]?.code).toBe('link-airtime-only');
-  });
-
-  test('computes all packets of an advertising event and remarks scan responses only', () => {
-    const advertising = { pattern: 'advertising', advertisingPhy: '1M', dataOctets: 31, channels: 3 } as const;
-    expect(stepDuration(exchange(advertising))).toMatchObject({ meanS: 0.001128, remarks: [] });
-    expect(stepDuration(exchange({ ...advertising, scanResponse: true })).remarks[0]?.code).toBe('link-airtime-only');
-  });
-
-  const withoutFrame: ExchangePattern[] = [
-    { pattern: 'slot', slotUse: 'idle-listen' },
-    { pattern: 'sampled-listener', periodUnits: 100, sampleS: 0.0001 },
-    { pattern: 'beacon', beaconOrder: 6, superframeOrder: 4, beaconPsduOctets: 20 },
-    { pattern: 'guard', intervalS: 10 },
-  ];
-  test.each(withoutFrame)('throws for $pattern, which has no frame of its own', (pattern) => {
-    const error = errorOf(InconsistentInputError, () => stepDuration(exchange(pattern), nodeLink, path));
-    expect(error).toMatchObject({ code: 'no-frame', field: `${path}.duration` });
-    expect(error.message).toContain('type the duration');
+  test('cautions what neither step nor node gives at the node, what the step gives at the step', () => {
+    const own: LinkSettings = { ...nodeLink, crystal: { tolerancePpm: 60 } };
+    const { remarks } = stepDuration(exchange({ pattern: 'unacknowledged', psduOctets: 50 }, own), {}, path);
+    expect(remarks.map(({ code, path: at }) => `${code} ${at}`)).toEqual([
+      'link-assumed node.link.busyProbability',
+      'link-assumed node.link.frameErrorRate',
+      `crystal-beyond-phy ${path}.duration.link.crystal`,
+    ]);
   });
 
   test('throws without a PHY at the link that would have to give it', () => {

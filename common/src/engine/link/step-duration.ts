@@ -24,9 +24,12 @@ const FRAME_FIELDS = new Set(
   ),
 );
 const LINK_FIELDS = new Set(
-  'preambleOctets,forwardErrorCorrection,busyProbability,frameErrorRate,ackErrorRate,macMinBE,macMaxBE,macMaxCSMABackoffs,macMaxFrameRetries'.split(
-    ',',
-  ),
+  [
+    'preambleOctets,forwardErrorCorrection,busyProbability,frameErrorRate,ackErrorRate,receivedLevelDbm,receivedLevelStepDb',
+    'sensitivityDbm,noiseDbm,macMinBE,macMaxBE,macMaxCSMABackoffs,macMaxFrameRetries,phy',
+  ]
+    .join(',')
+    .split(','),
 );
 /** Constants that a PHY leaves open are given by another PHY. */
 const PHY_FIELDS = new Set('shrOctets,phrOctets,turnaroundS,ccaS,unitBackoffS,ackWaitS,sifsS,lifsS'.split(','));
@@ -144,6 +147,7 @@ function fieldPath(place: Place, field: string): string {
   if (FRAME_FIELDS.has(field)) return linkPath(place, `frame.${field}`);
   if (LINK_FIELDS.has(field)) return linkPath(place, field);
   if (PHY_FIELDS.has(field)) return linkPath(place, 'phy');
+  if (field.startsWith('crystal.')) return linkPath(place, field);
   if (field.startsWith('link.')) return linkPath(place, field.slice('link.'.length));
   return `${place.path}.${field}`;
 }

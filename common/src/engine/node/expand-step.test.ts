@@ -291,3 +291,35 @@ describe('compileNode: needs in an exchange', () => {
     expect(error.errors[0]?.message).toContain('in the phase "assessment of the channel"');
   });
 });
+
+describe('compileNode: loading of a frame', () => {
+  const controller = buildPart('controller', { off: 0, waiting: 0.001, loading: 0.003 });
+  const loading = { partId: 'controller', stateId: 'loading', clockHz: 1_000_000 };
+  const withLoading = (own: Partial<typeof loading> & { beside?: boolean }): Node => {
+    const duration = { kind: 'exchange' as const, ...unacknowledged, loading: { ...loading, ...own } };
+    const step = exchangeStep(unacknowledged, { duration, states: { controller: 'waiting' } });
+    return nodeWith([radioWith(allRoles), controller], [step]);
+  };
+
+  test('puts the loading part into its state before the exchange', () => {
+    expect(intervalsOf(withLoading({})).map(told).slice(0, 2)).toEqual([
+      'loading idle loading',
+      'backoff idle waiting',
+    ]);
+  });
+
+  test('runs beside the beginning of the frame', () => {
+    const intervals = intervalsOf(withLoading({ beside: true }));
+    expect(intervals.map(told).slice(-2)).toEqual(['frame transmit loading', 'frame transmit waiting']);
+    const frame = exchangePlan({ kind: 'exchange', ...unacknowledged }, link).phases.find(({ id }) => id === 'frame');
+    expect(intervals.slice(-2).reduce((sumS, { durationS }) => sumS + durationS, 0)).toBeCloseTo(frame?.meanS ?? 0, 12);
+  });
+
+  test.each([
+    [{ partId: 'none' }, 'unknown-part', 'partId'],
+    [{ stateId: 'none' }, 'unknown-state', 'stateId'],
+  ])('by %o is an error at the loading', (own, code, field) => {
+    const error = errorOf(EngineErrors, () => compile(withLoading(own)));
+    expect(error.errors[0]).toMatchObject({ code, field: `node.routines[0].steps[0].duration.loading.${field}` });
+  });
+});

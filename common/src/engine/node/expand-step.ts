@@ -141,30 +141,47 @@ function phaseModel(
 
 /** The part that loads the frame is in a state of its own meanwhile: before the exchange, or beside the beginning of the frame. */
 function withLoading(
-  { partById }: StepContext,
+  context: StepContext,
   models: StepModel[],
   { loading, plan }: { loading: FrameLoading; plan: ExchangePlan },
 ): StepModel[] {
-  const loader = partById.get(loading.partId);
-  const state = loader?.stateById.get(loading.stateId);
-  if (!loader || !state) return models;
-  const loadingS = plan.figures.find(({ id }) => id === 'loading')?.value ?? 0;
+  const loader = loaderOf(context, models, loading);
+  if (!loader) return models;
+  const besideS = plan.figures.find(({ id }) => id === 'loading-beside')?.value ?? 0;
   return models.flatMap((model): StepModel[] => {
-    if (model.phase?.id !== (loading.beside === true ? 'frame' : 'loading')) return [model];
     const named = [...model.named];
-    named[loader.index] = state;
-    if (loading.beside !== true || loadingS >= model.durationS) return [{ ...model, named }];
-    const restS = model.durationS - loadingS;
+    named[loader.part.index] = loader.state;
+    if (model.phase?.id === 'loading') return [{ ...model, named }];
+    if (model.phase?.id !== 'frame' || besideS === 0) return [model];
+    if (besideS >= model.durationS) return [{ ...model, named }];
+    const restS = model.durationS - besideS;
+    const worstS = Math.max(restS, model.worstS - besideS);
     return [
-      { ...model, named, ...lasting(loadingS), suffix: `${model.suffix}/loading` },
-      {
-        ...model,
-        ...lasting(restS),
-        worstS: model.worstS - loadingS,
-        longestS: Math.max(restS, model.longestS - loadingS),
-      },
+      { ...model, named, ...lasting(besideS), suffix: `${model.suffix}/loading` },
+      { ...model, ...lasting(restS), worstS, longestS: Math.max(restS, model.longestS - besideS) },
     ];
   });
+}
+
+function loaderOf(
+  { parts, report }: StepContext,
+  models: readonly StepModel[],
+  { partId, stateId }: FrameLoading,
+): { part: PartModel; state: StateModel } | null {
+  const part = parts.find((candidate) => candidate.part.id === partId);
+  const state = part?.stateById.get(stateId);
+  if (part && state) return { part, state };
+  const field = `${models[0]?.path ?? ''}.duration.loading.${part ? 'stateId' : 'partId'}`;
+  const known = part ? part.states.map((one) => one.stateId) : parts.map((one) => one.part.id);
+  const expected = `one of ${known.join(', ')}`;
+  const message = part
+    ? `The part "${partId}", which loads the frame, has no state "${stateId}"; it has ${expected}.`
+    : `There is no part "${partId}" that could load the frame; the node has ${expected}.`;
+  report.inconsistent(part ? 'unknown-state' : 'unknown-part', field, message, {
+    value: part ? stateId : partId,
+    expected,
+  });
+  return null;
 }
 
 function lasting(durationS: number): Pick<StepModel, 'durationUs' | 'durationS' | 'termsS' | 'worstS' | 'longestS'> {
