@@ -4,6 +4,7 @@ import { InconsistentInputError, OutOfRangeError } from '#common/errors.ts';
 import { errorOf } from '#test/support/build-node.ts';
 import { acknowledgedExchange, unacknowledgedExchange } from './acknowledged-exchange.ts';
 import type { AcknowledgedExchangeInput } from './acknowledged-exchange.ts';
+import type { AcknowledgedExchange } from './exchange-over-access.ts';
 import { phyPresets } from './phy.table.ts';
 
 const oqpsk = phyPresets['oqpsk-2450'];
@@ -135,6 +136,30 @@ describe('acknowledgedExchange', () => {
       );
     },
   );
+
+  test('draws no less charge the more is lost, while receiving takes at most half as much again as listening', () => {
+    const currentA = fc.double({ min: 0, max: 0.05, noNaN: true });
+    const currents = fc.record({
+      transmitA: currentA,
+      listenA: currentA,
+      receiveShare: fc.double({ min: 0, max: 1.5, noNaN: true }),
+      backoffA: currentA,
+      turnaroundA: currentA,
+    });
+    fc.assert(
+      fc.property(arbitraryInput, currents, probability, (input, currentsA, share) => {
+        const chargeC = (exchange: AcknowledgedExchange): number =>
+          exchange.transmitS * currentsA.transmitA +
+          (exchange.assessmentS + exchange.acknowledgementWaitS) * currentsA.listenA +
+          exchange.acknowledgementS * currentsA.listenA * currentsA.receiveShare +
+          exchange.backoffS * currentsA.backoffA +
+          exchange.turnaroundS * currentsA.turnaroundA;
+        const more = { ...input, frameErrorRate: input.frameErrorRate + (1 - input.frameErrorRate) * share };
+        const lessC = chargeC(acknowledgedExchange(oqpsk, input));
+        expect(chargeC(acknowledgedExchange(oqpsk, more))).toBeGreaterThanOrEqual(lessC / rounding);
+      }),
+    );
+  });
 
   test.each([
     [{ frameErrorRate: -0.1 }, 'frameErrorRate'],
