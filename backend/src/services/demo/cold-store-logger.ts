@@ -1,4 +1,5 @@
 import { catalogueCell, catalogueClimate } from '#common/catalogue/catalogue.ts';
+import { windowOpenS } from '#common/engine/link/chirp-windows.ts';
 import type { Node, Part, Scenario, Supply } from '#common/engine/scenario/scenario.types.ts';
 import { fromUnit } from '#common/units/unit-lookup.ts';
 import { controller, current, fixed, instantly, move, radio, typicalOnly, voltage } from './demo-figures.ts';
@@ -74,6 +75,31 @@ function node(spreadingFactor: number): Node {
   };
 }
 
+/** How many symbols the radio listens for a preamble in each receive window. */
+const WINDOW_SYMBOLS = 8;
+
+/** The uplink with both receive windows as one exchange; the controller sleeps meanwhile. */
+function derivedNode(spreadingFactor: number): Node {
+  const typed = node(spreadingFactor);
+  const openS = windowOpenS(spreadingFactor, 125_000, WINDOW_SYMBOLS);
+  const receiveWindows = [
+    { delayS: 1, openS },
+    { delayS: 2, openS },
+  ];
+  return {
+    ...typed,
+    link: { dutyCycleBand: 'eu-868.0-868.6' },
+    routines: typed.routines.map((routine) => ({
+      ...routine,
+      steps: routine.steps.flatMap((step) => {
+        if (step.id === 'measure') return [step];
+        if (step.duration.kind !== 'exchange' || step.duration.pattern !== 'chirp') return [];
+        return [{ ...step, states: {}, duration: { ...step.duration, receiveWindows } }];
+      }),
+    })),
+  };
+}
+
 const twoCells = (designation: string): Supply => ({
   cell: catalogueCell(designation),
   series: 2,
@@ -112,6 +138,11 @@ export const COLD_STORE_LOGGER: DemoProject = {
           author: 'engineer',
           document: document(LITHIUM_NAME, node(12), twoCells('FR6')),
         },
+        {
+          note: 'Both receive windows of the uplink counted, eight symbols each.',
+          author: 'engineer',
+          document: document(LITHIUM_NAME, derivedNode(12), twoCells('FR6')),
+        },
       ],
     },
     {
@@ -119,7 +150,7 @@ export const COLD_STORE_LOGGER: DemoProject = {
         {
           note: 'For comparison: what the cheap cells would do in the cold.',
           author: 'engineer',
-          document: document('Two LR6 at −20 °C', node(12), twoCells('LR6')),
+          document: document('Two LR6 at −20 °C', derivedNode(12), twoCells('LR6')),
         },
       ],
     },

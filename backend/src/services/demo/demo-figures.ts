@@ -1,6 +1,7 @@
 import { typedFigure } from '#common/catalogue/typed-figure.ts';
 import type {
   Climate,
+  LinkSettings,
   Node,
   Part,
   Provenance,
@@ -45,6 +46,21 @@ export const duration = (text: string): Quantity => typedFigure('duration', text
  * @returns The duration, marked as invented.
  */
 export const fixed = (text: string): Step['duration'] => ({ kind: 'fixed', ...duration(text) });
+
+/**
+ * A probability or tolerance of the demo.
+ *
+ * @param typical The figure: a share, or ± ppm.
+ * @returns The quantity, marked as invented.
+ */
+export const plain = (typical: number): Quantity => ({ typical, provenance: INVENTED });
+
+/** How often the orchards' channels are busy, and frames and acknowledgements are lost. */
+export const orchardLosses: LinkSettings = {
+  busyProbability: plain(0.1),
+  frameErrorRate: plain(0.05),
+  ackErrorRate: plain(0.01),
+};
 
 /**
  * A transition of the demo.

@@ -8,6 +8,8 @@ import {
   instantly,
   move,
   orchardClimate,
+  orchardLosses,
+  plain,
   radio,
   typicalOnly,
   voltage,
@@ -59,6 +61,8 @@ interface FrostPostOptions {
   /** How long the leaf-wetness grid is excited for a reading. */
   excitation: string;
   reportEveryS: number;
+  /** Times on the air derived from the link; default: typed. */
+  isDerived?: boolean;
 }
 
 const measure = (excitation: string): Routine => ({
@@ -137,15 +141,54 @@ const setClock: Routine = {
   ],
 };
 
-function node({ excitation, reportEveryS }: FrostPostOptions): Node {
+/** The same report with times on the air that follow from the link: channel access, acknowledgement, retries. */
+const derivedReport = (periodS: number): Routine => ({
+  ...report(periodS),
+  steps: [
+    {
+      id: 'prepare',
+      name: 'Prepare the frame',
+      states: { controller: 'active' },
+      duration: fixed('2 … 3 … 5 ms'),
+    },
+    {
+      id: 'send',
+      name: 'Send the report',
+      states: { controller: 'idle' },
+      duration: { kind: 'exchange', pattern: 'acknowledged', payloadOctets: 24 },
+    },
+    {
+      id: 'settings',
+      name: 'Ask for settings',
+      states: { controller: 'idle' },
+      duration: { kind: 'exchange', pattern: 'poll', pendingProbability: plain(0.02), responsePsduOctets: 60 },
+    },
+  ],
+});
+
+const derivedClock: Routine = {
+  ...setClock,
+  steps: [
+    {
+      id: 'ask-for-time',
+      name: 'Ask for the time',
+      states: { controller: 'idle' },
+      duration: { kind: 'exchange', pattern: 'poll', pendingProbability: plain(0.98), responsePsduOctets: 24 },
+    },
+  ],
+};
+
+function node({ excitation, reportEveryS, isDerived = false }: FrostPostOptions): Node {
   return {
     parts: [controller('1 … 1.6 … 4 µA'), frostRadio, airSensor, leafSensor],
     leakages: [
       { id: 'board', name: 'Board leakage', current: current('0.4 µA') },
       { id: 'supervisor', name: 'Reset supervisor', current: current('0.6 … 1 … 1.6 µA') },
     ],
-    link: { phy: 'oqpsk-2450' },
-    routines: [measure(excitation), report(reportEveryS), setClock],
+    link: { phy: 'oqpsk-2450', ...(isDerived ? orchardLosses : {}) },
+    routines: isDerived
+      ? [measure(excitation), derivedReport(reportEveryS), derivedClock]
+      : [measure(excitation), report(reportEveryS), setClock],
   };
 }
 
@@ -177,6 +220,7 @@ const LR6_NAME = 'Two LR6, report every 15 min';
 const ER_NAME = 'One ER14505';
 const draft = node({ excitation: '5 s', reportEveryS: 900 });
 const shortened = node({ excitation: '2.7 s', reportEveryS: 900 });
+const derived = node({ excitation: '2.7 s', reportEveryS: 900, isDerived: true });
 const oneLithium: Supply = { ...twoAlkaline, cell: catalogueCell('ER14505'), series: 1 };
 
 export const FROST_POST: DemoProject = {
@@ -201,6 +245,11 @@ export const FROST_POST: DemoProject = {
           author: 'owner',
           document: document(LR6_NAME, shortened, withWarning(twoAlkaline, 2.45)),
         },
+        {
+          note: 'Channel access, acknowledgement, retries and polls derived from the link instead of typed.',
+          author: 'engineer',
+          document: document(LR6_NAME, derived, withWarning(twoAlkaline, 2.45)),
+        },
       ],
     },
     {
@@ -214,6 +263,11 @@ export const FROST_POST: DemoProject = {
           note: 'Report once an hour: the mean falls, the pulse in the cold does not.',
           author: 'engineer',
           document: document(ER_NAME, node({ excitation: '2.7 s', reportEveryS: 3_600 }), oneLithium),
+        },
+        {
+          note: 'Times on the air derived from the link.',
+          author: 'engineer',
+          document: document(ER_NAME, node({ excitation: '2.7 s', reportEveryS: 3_600, isDerived: true }), oneLithium),
         },
       ],
     },

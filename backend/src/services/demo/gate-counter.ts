@@ -1,7 +1,17 @@
 import { catalogueCell } from '#common/catalogue/catalogue.ts';
 import type { Node, Part, Routine, Scenario, Supply } from '#common/engine/scenario/scenario.types.ts';
 import { fromUnit } from '#common/units/unit-lookup.ts';
-import { controller, current, fixed, orchardClimate, radio, typicalOnly, voltage } from './demo-figures.ts';
+import {
+  controller,
+  current,
+  fixed,
+  orchardClimate,
+  orchardLosses,
+  plain,
+  radio,
+  typicalOnly,
+  voltage,
+} from './demo-figures.ts';
 import type { DemoProject } from './demo.types.ts';
 
 const gateRadio: Part = radio({
@@ -67,6 +77,80 @@ const alive: Routine = {
     },
   ],
 };
+
+/** The gateway's answer stands for an acknowledgement; how long it may take is the application's choice. */
+const ANSWER_LISTENING_S = 0.6;
+
+const derivedRoutines: Routine[] = [
+  {
+    id: 'gate-opens',
+    name: 'Gate opens',
+    enabled: true,
+    schedule: { kind: 'random', meanPerDay: 140, busiestPerDay: 600 },
+    steps: [
+      {
+        id: 'debounce',
+        name: 'Wait until the contact rests',
+        states: { contact: 'closed', controller: 'active' },
+        duration: fixed('40 ms'),
+      },
+      {
+        id: 'send',
+        name: 'Send the count',
+        states: { contact: 'closed', controller: 'idle' },
+        duration: { kind: 'exchange', pattern: 'unacknowledged', payloadOctets: 16 },
+      },
+      {
+        id: 'answer',
+        name: 'Listen for the answer',
+        states: { contact: 'closed', controller: 'idle' },
+        duration: { kind: 'exchange', pattern: 'receive', payloadOctets: 16, listenS: ANSWER_LISTENING_S },
+      },
+      {
+        id: 'gate-stays-open',
+        name: 'Gate stays open',
+        states: { contact: 'closed' },
+        duration: fixed('8 … 20 … 60 s'),
+      },
+    ],
+  },
+  {
+    ...followBeacon,
+    steps: [
+      {
+        id: 'hear-beacon',
+        name: 'Hear the beacon',
+        states: { controller: 'idle' },
+        duration: { kind: 'exchange', pattern: 'guard', intervalS: 240, psduOctets: 30 },
+      },
+    ],
+  },
+  {
+    ...alive,
+    steps: [
+      {
+        id: 'send-alive',
+        name: 'Send the sign of life',
+        states: { controller: 'idle' },
+        duration: { kind: 'exchange', pattern: 'unacknowledged', payloadOctets: 24 },
+      },
+      {
+        id: 'answer-alive',
+        name: 'Listen for settings',
+        states: { controller: 'idle' },
+        duration: { kind: 'exchange', pattern: 'receive', payloadOctets: 32, listenS: 0.12 },
+      },
+    ],
+  },
+];
+
+function derivedNode(): Node {
+  return {
+    ...node('600 ms'),
+    link: { phy: 'sun-fsk-50', ...orchardLosses, tolerancePpm: plain(60), peerTolerancePpm: plain(20) },
+    routines: derivedRoutines,
+  };
+}
 
 function node(answerWindow: string): Node {
   return {
@@ -152,6 +236,14 @@ export const GATE_COUNTER: DemoProject = {
           note: 'Low-battery warning at 2.75 V.',
           author: 'engineer',
           document: document(node('400 … 600 … 800 ms'), {
+            ...oneCell,
+            lowBattery: { thresholdV: 2.75, stepV: 0.05, hysteresisV: 0.1, readAt: 'rest' },
+          }),
+        },
+        {
+          note: 'Channel access, times on the air and the guard before the beacon derived from the link.',
+          author: 'engineer',
+          document: document(derivedNode(), {
             ...oneCell,
             lowBattery: { thresholdV: 2.75, stepV: 0.05, hysteresisV: 0.1, readAt: 'rest' },
           }),
