@@ -72,6 +72,8 @@ export interface FrameField extends Origin {
     | 'psdu';
   name: string;
   octets: number;
+  /** Time on air of these octets, s; all fields together make the airtime of the frame. */
+  airtimeS: number;
 }
 
 /** A frame octet by octet. A PSDU typed as a whole is one field `psdu`. */

@@ -17,6 +17,9 @@ export interface FrameAirtimeOptions {
   forwardErrorCorrection?: boolean;
 }
 
+/** Octets on air for each octet that rate-1/2 forward error correction codes. */
+const CODED = 2;
+
 /**
  * Time on air of one frame: `8 · (SHR + PHR + PSDU) / bit rate`; rate-1/2 forward error correction doubles PHR and PSDU.
  *
@@ -39,7 +42,7 @@ export function frameAirtimeS(phy: Phy, psduOctets: number, options: FrameAirtim
   const shrOctets = shrOctetsOf(phy, options);
   const phrOctets = constantOf(phy, 'phrOctets', options.phrOctets);
   const codedOctets = phrOctets + psduOctets;
-  if (options.forwardErrorCorrection !== true) return (8 * (shrOctets + codedOctets)) / phy.bitRateBps;
+  if (options.forwardErrorCorrection !== true) return octetsAirtimeS(phy, shrOctets + codedOctets);
   if (phy.id !== 'custom' && !phy.id.startsWith('sun-fsk')) {
     throw new InconsistentInputError(`The PHY "${phy.id}" has no forward error correction; only SUN FSK has.`, {
       code: 'no-forward-error-correction',
@@ -48,7 +51,22 @@ export function frameAirtimeS(phy: Phy, psduOctets: number, options: FrameAirtim
       expected: 'false, or a SUN FSK PHY',
     });
   }
-  return (8 * (shrOctets + 2 * codedOctets)) / phy.bitRateBps;
+  return octetsAirtimeS(phy, shrOctets + CODED * codedOctets);
+}
+
+/**
+ * Time on air of some octets of a frame: `8 · octets / bit rate`, twice that where rate-1/2 forward error correction codes them.
+ *
+ * Source: as `frameAirtimeS`.
+ *
+ * @param phy A preset or a PHY of one's own.
+ * @param octets Octets, 0 or more.
+ * @param isCoded Whether forward error correction codes them; it never codes the synchronisation header.
+ * @returns Time on air, s.
+ * @example octetsAirtimeS(phyPresets['oqpsk-2450'], 24) // 0.000768
+ */
+export function octetsAirtimeS(phy: Phy, octets: number, isCoded = false): number {
+  return (8 * (isCoded ? CODED * octets : octets)) / phy.bitRateBps;
 }
 
 function shrOctetsOf(phy: Phy, { shrOctets, preambleOctets }: FrameAirtimeOptions): number {

@@ -1,7 +1,7 @@
 import { InconsistentInputError } from '#common/errors.ts';
 import type { LinkSettings } from '../scenario/scenario.types.ts';
 import type { FrameField, FrameLayout } from './exchange-plan.types.ts';
-import { frameAirtimeS } from './frame-airtime.ts';
+import { frameAirtimeS, octetsAirtimeS } from './frame-airtime.ts';
 import { standardFrame, STANDARD_FRAME_SOURCE } from './link-defaults.table.ts';
 import { macHeader, macHeaderFields } from './mac-header.ts';
 import type { MacHeader, MacHeaderInput } from './mac-header.ts';
@@ -48,10 +48,19 @@ export function frameLayout(phy: Phy, size: FrameSize, link: LinkSettings): Fram
   for (const { octets } of outer) outerOctets += octets;
   const { psduOctets, largestPayloadOctets } = inner;
   const airOctets = outerOctets + psduOctets;
-  return { fields: [...outer, ...inner.fields], psduOctets, airOctets, airtimeS, largestPayloadOctets };
+  const fields = [...outer, ...inner.fields].map((sized) => ({
+    ...sized,
+    airtimeS: octetsAirtimeS(phy, sized.octets, forwardErrorCorrection === true && !SYNCHRONISATION.has(sized.id)),
+  }));
+  return { fields, psduOctets, airOctets, airtimeS, largestPayloadOctets };
 }
 
-type Inner = Pick<FrameLayout, 'fields' | 'psduOctets' | 'largestPayloadOctets'>;
+/** What forward error correction never codes. */
+const SYNCHRONISATION: ReadonlySet<FrameField['id']> = new Set(['preamble', 'sfd']);
+
+/** A field whose time is still to be told. */
+type SizedField = Omit<FrameField, 'airtimeS'>;
+type Inner = Pick<FrameLayout, 'psduOctets' | 'largestPayloadOctets'> & { fields: SizedField[] };
 
 function typed(psduOctets: number): Inner {
   const fields = [field('psdu', 'PSDU', psduOctets, { formula: 'as given, FCS counted', source: STEP })];
@@ -63,12 +72,12 @@ function field(
   name: string,
   octets: number,
   origin: { formula: string; source: string },
-): FrameField {
+): SizedField {
   return { id, name, octets, formula: origin.formula, source: origin.source };
 }
 
 /** Preamble and delimiter are told apart where the preset's preamble is known. */
-function phyFields(phy: Phy, { preambleOctets = PRESET_PREAMBLE_OCTETS }: LinkSettings): FrameField[] {
+function phyFields(phy: Phy, { preambleOctets = PRESET_PREAMBLE_OCTETS }: LinkSettings): SizedField[] {
   const shrOctets = phy.shrOctets ?? 0;
   const source = phy.sources.shrOctets;
   const phr = field('phr', 'PHY header', phy.phrOctets ?? 0, { formula: 'length', source: phy.sources.phrOctets });
@@ -113,7 +122,7 @@ function macFields(
   input: MacHeaderInput,
   sizes: MacHeader,
   { payloadOctets, commandOctets }: { payloadOctets: number; commandOctets: number },
-): FrameField[] {
+): SizedField[] {
   const { informationElementOctets = 0, fcsOctets = 2 } = input;
   const header = macHeaderFields(input);
   const format = input.frameVersion === '2006' ? `${HEADER_SOURCE}; ${STANDARD_FRAME_SOURCE}` : HEADER_SOURCE;

@@ -1,7 +1,8 @@
 import type { LinkSettings } from '../scenario/scenario.types.ts';
 
 /**
- * Link settings that hold for a step: those of the node, with what the step gives in their place; the frame format field by field.
+ * Link settings that hold for a step: those of the node, with what the step gives in their place; the frame format and the crystal
+ * field by field.
  *
  * @param nodeLink Settings of the node.
  * @param stepLink Settings of the step.
@@ -10,6 +11,8 @@ import type { LinkSettings } from '../scenario/scenario.types.ts';
  */
 export function linkOf(nodeLink: LinkSettings = {}, stepLink?: LinkSettings): LinkSettings {
   if (stepLink === undefined) return nodeLink;
-  const merged = { ...nodeLink, ...stepLink };
-  return nodeLink.frame && stepLink.frame ? { ...merged, frame: { ...nodeLink.frame, ...stepLink.frame } } : merged;
+  const merged: LinkSettings = { ...nodeLink, ...stepLink };
+  if (nodeLink.frame && stepLink.frame) merged.frame = { ...nodeLink.frame, ...stepLink.frame };
+  if (nodeLink.crystal && stepLink.crystal) merged.crystal = { ...nodeLink.crystal, ...stepLink.crystal };
+  return merged;
 }

@@ -1,5 +1,6 @@
-import type { Node, Part, State, Step } from '#common/engine/scenario/scenario.types.ts';
+import type { ExchangeDuration, Node, Part, State, Step } from '#common/engine/scenario/scenario.types.ts';
 import { filterKeeping, mapKeeping } from './list.ts';
+import { withOptional } from './operations/supply-operations.ts';
 
 /** Where a part, or one of its states, is used outside itself; in words for the question before removing it. */
 export function usesOf(node: Node, partId: string, stateId?: string): string[] {
@@ -7,13 +8,22 @@ export function usesOf(node: Node, partId: string, stateId?: string): string[] {
     otherPartId === partId && (stateId === undefined || otherStateId === stateId);
   const inSteps = node.routines.flatMap((routine) =>
     routine.steps
-      .filter((step) => Object.entries(step.states).some(([id, state]) => isUsed(id, state)))
+      .filter((step) => statesOfStep(step).some(([id, state]) => isUsed(id, state)))
       .map((step) => `step “${step.name}” of routine “${routine.name}”`),
   );
   const inParts = node.parts.flatMap((part) => [
     ...(part.id === partId && stateId === undefined ? [] : usesInPart(part, partId, stateId)),
   ]);
   return [...inSteps, ...inParts];
+}
+
+/** Part and state of everything that a step names: what it puts parts into, and what loads its frame. */
+function statesOfStep({ states, duration }: Step): [string, string][] {
+  const loading = duration.kind === 'exchange' ? duration.loading : undefined;
+  return [
+    ...Object.entries(states),
+    ...(loading ? [[loading.partId, loading.stateId] satisfies [string, string]] : []),
+  ];
 }
 
 function usesInPart(part: Part, partId: string, stateId: string | undefined): string[] {
@@ -92,9 +102,18 @@ function cleanStep(step: Step, exists: Exists, parts: ReadonlyMap<string, unknow
   const entries = Object.entries(step.states);
   const kept = filterKeeping(entries, ([partId, stateId]) => exists(partId, stateId));
   const named = kept === entries ? step : { ...step, states: Object.fromEntries(kept) };
-  const { duration } = named;
-  if (duration.kind !== 'exchange' || duration.radioPartId === undefined || parts.has(duration.radioPartId))
-    return named;
-  const { radioPartId: _gone, ...anyRadio } = duration;
-  return { ...named, duration: anyRadio };
+  const duration = named.duration.kind === 'exchange' ? cleanExchange(named.duration, exists, parts) : named.duration;
+  return duration === named.duration ? named : { ...named, duration };
+}
+
+function cleanExchange(
+  exchange: ExchangeDuration,
+  exists: Exists,
+  parts: ReadonlyMap<string, unknown>,
+): ExchangeDuration {
+  const { radioPartId, loading } = exchange;
+  const isRadioThere = radioPartId === undefined || parts.has(radioPartId);
+  const ofRadio = isRadioThere ? exchange : withOptional(exchange, 'radioPartId', undefined);
+  const isLoadingThere = !loading || exists(loading.partId, loading.stateId);
+  return isLoadingThere ? ofRadio : withOptional(ofRadio, 'loading', undefined);
 }

@@ -41,7 +41,9 @@ export function ExchangeFields(props: ExchangeFieldsProps) {
           change={(document, pattern) => change(document, (before) => exchangeOfPattern(before, pattern))}
         />
       </div>
-      <RadioChoice {...props} />
+      <div className="max-sm:col-span-full">
+        <RadioChoice {...props} />
+      </div>
       {kind.fields.map((descriptor) => (
         <DescriptorField key={`${exchange.pattern} ${descriptor.key}`} descriptor={descriptor} holder={holder} />
       ))}

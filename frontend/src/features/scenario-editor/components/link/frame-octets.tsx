@@ -45,7 +45,7 @@ export function FrameOctets({ frame }: { frame: FrameLayout }) {
         <div className="mt-2 border-l-2 border-accent pl-4" role="status">
           <p className="text-small">
             <strong className="font-extrabold">{selected.field.name}</strong>: {octets(selected.field.octets)},{' '}
-            {placeWords(selected)}
+            {placeWords(selected)}, {phaseTime(selected.field.airtimeS)} on air
           </p>
           <OriginNote formula={selected.field.formula} source={selected.field.source} />
         </div>

@@ -6,6 +6,7 @@ import {
   type Leader,
   type PictureRow,
 } from '#frontend/features/scenario-editor/model/link/exchange-picture.ts';
+import { phaseTime } from '#frontend/features/scenario-editor/model/link/figure-words.ts';
 import { patternOfRole } from '#frontend/lib/activity-patterns.ts';
 import { ROLE_TINTS } from './role-tints.ts';
 
@@ -26,7 +27,7 @@ export function PhaseRow({ row, phases, selected, onSelect, meanAt }: Props) {
     <div className="relative">
       <Leaders leaders={leaders(row)} selected={selected} />
       <div className="relative h-10 border-b border-ink/70">
-        {row.stretches.map(({ phase, from, to, attempt }) => {
+        {row.stretches.map(({ phase, from, to, attempt, durationS }) => {
           const role = phases[phase]?.role ?? 'idle';
           return (
             <div
@@ -36,8 +37,9 @@ export function PhaseRow({ row, phases, selected, onSelect, meanAt }: Props) {
               className={`@container absolute bottom-0 h-9 min-w-[3px] cursor-pointer border-l border-paper ${ROLE_TINTS[role]} ${phase === selected ? 'outline-2 outline-offset-1 outline-accent' : ''}`}
               style={{ left: percent(from), width: percent(to - from), zIndex: zOf(to - from), ...patternOfRole(role) }}
             >
-              <span className="hidden truncate pt-1 pl-1.5 text-[0.6875rem] leading-[0.9375rem] @min-[4.5rem]:block">
-                {phases[phase]?.name}
+              <span className="hidden flex-col pt-1 pl-1.5 text-[0.6875rem] leading-[0.9375rem] @min-[3.25rem]:flex">
+                <span className="truncate">{phases[phase]?.name}</span>
+                <span className="truncate tabular-nums">{phaseTime(durationS)}</span>
               </span>
             </div>
           );

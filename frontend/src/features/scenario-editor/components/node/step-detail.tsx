@@ -40,16 +40,18 @@ export function StepDetail({ routine, step }: DetailProps) {
         </p>
       </div>
       <div className="mt-1 grid grid-cols-2 gap-x-6 sm:grid-cols-4">
-        <ChoiceField
-          field={`${field}.kind`}
-          label="Duration"
-          editLabel={`duration of ${step.name}`}
-          value={duration.kind}
-          choices={KINDS}
-          change={(document, kind) =>
-            change((before) => (before.kind === kind ? before : durationOfKind(kind, document.node.link)))(document)
-          }
-        />
+        <div className={duration.kind === 'exchange' ? 'max-sm:col-span-full' : ''}>
+          <ChoiceField
+            field={`${field}.kind`}
+            label="Duration"
+            editLabel={`duration of ${step.name}`}
+            value={duration.kind}
+            choices={KINDS}
+            change={(document, kind) =>
+              change((before) => (before.kind === kind ? before : durationOfKind(kind, document.node.link)))(document)
+            }
+          />
+        </div>
         {duration.kind === 'fixed' && (
           <div className="col-span-full sm:col-span-3">
             <QuantityField

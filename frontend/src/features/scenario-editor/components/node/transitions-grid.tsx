@@ -14,6 +14,7 @@ import { ChoiceField, type Choice } from '../fields/choice-field.tsx';
 import { QuantityCells } from '../fields/quantity-fields.tsx';
 import { EditGrid, GridCell, GridRow, PINNED_CELL, type GridColumn } from '../grid/edit-grid.tsx';
 import { RowToolbar } from '../grid/row-toolbar.tsx';
+import { TransitionDetails } from './transition-details.tsx';
 
 const COLUMNS: readonly GridColumn[] = [
   { key: 'fromStateId', header: 'From', width: '6.5rem' },
@@ -58,46 +59,51 @@ export function TransitionsGrid({ part }: { part: Part }) {
   };
   const name = selected && `${nameOf(part, selected.fromStateId)} to ${nameOf(part, selected.toStateId)}`;
   return (
-    <EditGrid
-      label={`Transitions of ${part.name}`}
-      columns={COLUMNS}
-      fieldPrefix={`${field}.`}
-      onMoveRow={move}
-      onAddRow={add}
-      onSelectRow={(rowId) => setSelectedIndex(Number(rowId))}
-      footer={
-        <RowToolbar
-          what="transition"
-          addLabel="Add a transition"
-          selected={name ?? null}
-          fullText={fullText(part)}
-          onAdd={add}
-          onMove={(places) => selectedIndex !== null && move(String(selectedIndex), places)}
-          onRemove={() =>
-            selectedIndex !== null &&
-            removal(
-              {
-                label: `remove the transition ${name}`,
-                change: (document) => removeTransition(document, part.id, selectedIndex),
-              },
-              `Transition ${name} removed.`,
-            )
-          }
-        />
-      }
-    >
-      {part.transitions.map((transition, index) => (
-        <TransitionRow
-          // Transitions have no id of their own, and two may be alike.
-          key={index}
-          partId={part.id}
-          index={index}
-          transition={transition}
-          states={states}
-          isSelected={index === selectedIndex}
-        />
-      ))}
-    </EditGrid>
+    <>
+      <EditGrid
+        label={`Transitions of ${part.name}`}
+        columns={COLUMNS}
+        fieldPrefix={`${field}.`}
+        onMoveRow={move}
+        onAddRow={add}
+        onSelectRow={(rowId) => setSelectedIndex(Number(rowId))}
+        footer={
+          <RowToolbar
+            what="transition"
+            addLabel="Add a transition"
+            selected={name ?? null}
+            fullText={fullText(part)}
+            onAdd={add}
+            onMove={(places) => selectedIndex !== null && move(String(selectedIndex), places)}
+            onRemove={() =>
+              selectedIndex !== null &&
+              removal(
+                {
+                  label: `remove the transition ${name}`,
+                  change: (document) => removeTransition(document, part.id, selectedIndex),
+                },
+                `Transition ${name} removed.`,
+              )
+            }
+          />
+        }
+      >
+        {part.transitions.map((transition, index) => (
+          <TransitionRow
+            // Transitions have no id of their own, and two may be alike.
+            key={index}
+            partId={part.id}
+            index={index}
+            transition={transition}
+            states={states}
+            isSelected={index === selectedIndex}
+          />
+        ))}
+      </EditGrid>
+      {selected && selectedIndex !== null && name !== undefined && (
+        <TransitionDetails part={part} index={selectedIndex} transition={selected} name={name} />
+      )}
+    </>
   );
 }
 

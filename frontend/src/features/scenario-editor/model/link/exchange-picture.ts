@@ -8,6 +8,7 @@ export interface Stretch {
   to: number;
   /** Counted from 1; null for what happens once, and where attempts are too many to draw apart. */
   attempt: number | null;
+  durationS: number;
 }
 
 export interface PictureRow {
@@ -62,7 +63,7 @@ function laidOut(pieces: readonly Piece[]): PictureRow {
   const stretches = pieces.map(({ phase, durationS, attempt }) => {
     const from = at / totalS;
     at += durationS;
-    return { phase, attempt, from, to: at / totalS };
+    return { phase, attempt, durationS, from, to: at / totalS };
   });
   const numbers = [...new Set(stretches.flatMap(({ attempt }) => attempt ?? []))];
   const attempts = numbers.map((number) => {
