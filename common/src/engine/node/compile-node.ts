@@ -4,6 +4,7 @@ import { compileRoutine } from './compile-routine.ts';
 import { constantDraw } from './draw.ts';
 import type { NodeProgram, PartProgram, RoutineProgram } from './node-program.types.ts';
 import { NodeReport } from './node-report.ts';
+import { OnAirAccount } from './on-air.ts';
 import { partModel } from './part-model.ts';
 import type { PartModel } from './part-model.ts';
 
@@ -18,7 +19,9 @@ import type { PartModel } from './part-model.ts';
  *
  * @param node The node.
  * @param options Reference voltage of states that give none, V: the regulator's output, 3.0 V without one.
- * @returns The program, with remarks `instant-moves`, `busy-part-elsewhere` and `link-airtime-only`.
+ * @returns The program, with remarks `instant-moves`, `busy-part-elsewhere`, `duty-cycle-exceeded`, those of exchanges whose phases the
+ *   radio cannot follow as they are (`role-fallback`, `radio-open`, `turnaround-and-transition`, `start-up-and-transition`,
+ *   `repeats-merged`), and the cautions of their plans.
  * @throws EngineErrors with every problem of the node: `duplicate-id`, `unknown-part`, `unknown-state`, `out-of-range`,
  *   `no-path`, `need-unmet`, and those of step durations.
  * @example compileNode(node, { defaultReferenceVoltageV: 3 }).routines[0]?.cycleS
@@ -35,11 +38,14 @@ export function compileNode(
   const parts = node.parts.flatMap((part, index) => partModel(part, index, defaultReferenceVoltageV) ?? []);
   const partById = new Map(parts.map((part) => [part.part.id, part]));
   const routines: RoutineProgram[] = [];
+  const onAirAccount = new OnAirAccount();
   node.routines.forEach((routine, index) => {
-    const program = compileRoutine({ parts, partById, link: node.link, report }, routine, `node.routines[${index}]`);
+    const context = { parts, partById, link: node.link, report, onAirAccount };
+    const program = compileRoutine(context, routine, `node.routines[${index}]`);
     if (routine.enabled) routines.push(program);
   });
   report.throwErrors();
+  onAirAccount.caution(report);
   return {
     parts: parts.map(partProgram),
     leakages: node.leakages.map(({ id, name, current }) => ({

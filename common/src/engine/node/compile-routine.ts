@@ -8,11 +8,15 @@ import type { Layout, StepModel } from './layout.types.ts';
 import { fromMicros } from './micros.ts';
 import type { RoutineProgram, Segment } from './node-program.types.ts';
 import type { NodeReport } from './node-report.ts';
+import type { OnAir, OnAirAccount } from './on-air.ts';
 import type { PartModel, StateModel } from './part-model.ts';
 import { reachableStateIds } from './transition-path.ts';
 
 /** What all routines of a node share. */
-export type RoutineContext = Omit<StepContext, 'isEnabled'>;
+export type RoutineContext = Omit<StepContext, 'isEnabled' | 'onAir'> & {
+  /** Gets what the routine is on the air. */
+  onAirAccount: OnAirAccount;
+};
 
 /**
  * Compiles one routine whose ids have been checked.
@@ -25,7 +29,8 @@ export type RoutineContext = Omit<StepContext, 'isEnabled'>;
  */
 export function compileRoutine(context: RoutineContext, routine: Routine, path: string): RoutineProgram {
   const { parts, partById, report } = context;
-  const stepContext = { ...context, isEnabled: routine.enabled };
+  const onAir: OnAir[] = [];
+  const stepContext = { ...context, isEnabled: routine.enabled, onAir };
   const steps = routine.steps.flatMap((step, index) => expandStep(stepContext, step, `${path}.steps[${index}]`));
   const withoutPath = new Set<string>();
   const layout = layOut({
@@ -45,11 +50,13 @@ export function compileRoutine(context: RoutineContext, routine: Routine, path: 
     if (routine.enabled) remarkBusyElsewhere(report, mover, hop.transitionIndex);
   });
   if (routine.enabled) for (const index of layout.instantMovers) remarkInstantMoves(report, parts[index]);
+  const cycleS = fromMicros(layout.cycleUs) + layout.roundedOffS;
+  if (routine.enabled) context.onAirAccount.add(routine.schedule, cycleS, onAir);
   return {
     routineId: routine.id,
     name: routine.name,
     schedule: routine.schedule,
-    cycleS: fromMicros(layout.cycleUs) + layout.roundedOffS,
+    cycleS,
     intervals: intervalsOf(layout, routine.id, steps),
     segments: segmentsOf(layout, steps),
   };

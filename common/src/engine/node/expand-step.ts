@@ -7,6 +7,7 @@ import { radioOf, radioState, remarkDoubleCounts } from './exchange-states.ts';
 import type { StepModel } from './layout.types.ts';
 import { toMicros } from './micros.ts';
 import type { NodeReport } from './node-report.ts';
+import type { OnAir } from './on-air.ts';
 import type { PartModel, StateModel } from './part-model.ts';
 
 /** What all steps of a routine share. */
@@ -17,6 +18,8 @@ export interface StepContext {
   report: NodeReport;
   /** Remarks of a disabled routine would tell of what is not counted anyway. */
   isEnabled: boolean;
+  /** Gets the time on air of each exchange in a band with a limit. */
+  onAir: OnAir[];
 }
 
 /** Sub-steps that the repeats of one step may become; beyond, durations are multiplied instead. */
@@ -86,9 +89,22 @@ function exchangeModels(context: StepContext, own: Own, exchange: ExchangeDurati
   if (found === null) return [{ ...own, durationUs: 0, durationS: 0, termsS: [0], worstS: 0, longestS: 0 }];
   const { plan, remarks } = found;
   if (context.isEnabled) for (const remark of remarks) context.report.remark(remark);
+  noteOnAir(context, own, { exchange, plan });
   const radio = radioOf(context, own, exchange);
   if (!radio || isPlain(exchange, plan)) return [wholeExchange(own, plan)];
   return repeated(context, phaseModels(context, own, { plan, radio, exchange }));
+}
+
+function noteOnAir(
+  { link, onAir }: StepContext,
+  { step, path }: Own,
+  { exchange, plan }: { exchange: ExchangeDuration; plan: ExchangePlan },
+): void {
+  const ownBand = exchange.link?.dutyCycleBand;
+  const bandId = ownBand ?? link?.dutyCycleBand;
+  if (bandId === undefined || !(plan.onAirWorstS > 0)) return;
+  const at = ownBand === undefined ? 'node' : `${path}.duration`;
+  onAir.push({ bandId, onAirS: plan.onAirWorstS * (step.repeats ?? 1), path: `${at}.link.dutyCycleBand` });
 }
 
 /** A frame alone lasts as long as its airtime, in the states that the step types. */
