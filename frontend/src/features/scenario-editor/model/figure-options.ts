@@ -29,6 +29,7 @@ export const FACTOR_FROM_ZERO: ParseOptions = { dimension: 'number', min: 0 };
 export const CAPACITY_FACTOR: ParseOptions = { dimension: 'number', above: 0, max: 1 };
 export const HOUR: ParseOptions = { dimension: 'number', min: 0, max: 24 };
 export const PER_DAY: ParseOptions = { dimension: 'rate-per-day', min: 0 };
+export const TIMES_A_YEAR: ParseOptions = { dimension: 'number', min: 0 };
 export const PER_SECOND: ParseOptions = { dimension: 'rate-per-second', min: 0 };
 export const OCTETS: ParseOptions = { dimension: 'octets', min: 0, max: 65_535, whole: true };
 export const CLOCK: ParseOptions = { dimension: 'frequency', defaultUnit: 'kHz', above: 0 };

@@ -48,7 +48,7 @@ function ownWords(schedule: Schedule): string {
     case 'every':
       return `every ${formatDuration(schedule.periodS)}`;
     case 'random':
-      return `at random, ${formatNumber(schedule.meanPerDay)} a day`;
+      return `at random, ${rateWords(schedule.meanPerDay)}`;
     case 'window':
       return `${clock(schedule.fromHour)} to ${clock(schedule.toHour)}, every ${formatDuration(schedule.periodS)}`;
     case 'once':
@@ -56,6 +56,13 @@ function ownWords(schedule: Schedule): string {
     case 'always':
       return 'always';
   }
+}
+
+/** What happens less often than once a week is easier to grasp by the year. */
+function rateWords(meanPerDay: number): string {
+  return meanPerDay > 0 && meanPerDay < 1 / 7
+    ? `${formatNumber(perYearOf(meanPerDay))} a year`
+    : `${formatNumber(meanPerDay)} a day`;
 }
 
 function clock(hour: number): string {

@@ -58,6 +58,11 @@ export function addRoutine(
   return updateNode(added, withoutDanglingReferences);
 }
 
+/** Adds a ready routine at the end; its steps get ids of their own. */
+export function addReadyRoutine(scenario: Scenario, routine: Omit<Routine, 'id'>): Scenario {
+  return addRoutine(scenario, { ...routine, steps: withNewIds(scenario, routine.steps) });
+}
+
 export function duplicateRoutine(scenario: Scenario, routineId: string): Scenario {
   const index = scenario.node.routines.findIndex((routine) => routine.id === routineId);
   const routine = scenario.node.routines[index];
