@@ -1,7 +1,7 @@
 /**
  * Random valid scenarios for property tests. Every routine of every node compiles: parts either have no transition at all
  * (they move instantly) or a ring of transitions in both directions, so that each state is reachable from each other.
- * All times are whole microseconds, all currents non-negative.
+ * Typed times are whole microseconds, all currents non-negative. Exchanges find their radio among the parts, or none.
  */
 import fc from 'fast-check';
 import type {
@@ -14,10 +14,12 @@ import type {
   Routine,
   Scenario,
   Schedule,
+  StateRole,
   Step,
   Supply,
   Transition,
 } from '#common/engine/scenario/scenario.types.ts';
+import { arbitraryExchange } from './arbitrary-exchange.ts';
 
 const quantity = (typical: number): Quantity => ({ typical });
 const laws: readonly LoadLaw[] = ['constant-current', 'constant-power', 'resistive'];
@@ -44,6 +46,12 @@ function ring(stateIds: string[], durationsS: number[], currentsA: number[]): Tr
   });
 }
 
+/** Roles of a radio by its number of states: each that an exchange needs has a state or a stand-in. */
+const RADIO_ROLES: Readonly<Record<number, readonly StateRole[]>> = {
+  3: ['idle', 'listen', 'transmit'],
+  4: ['sleep', 'idle', 'receive', 'transmit'],
+};
+
 function arbitraryPart(index: number): fc.Arbitrary<Part> {
   return fc
     .record({
@@ -53,13 +61,15 @@ function arbitraryPart(index: number): fc.Arbitrary<Part> {
       law: fc.constantFrom(...laws),
       doublingK: fc.option(fc.integer({ min: 5, max: 30 }), { nil: undefined }),
       instant: fc.boolean(),
+      isRadio: fc.boolean(),
     })
-    .map(({ stateCount, currentsA, durationsS, law, doublingK, instant }): Part => {
+    .map(({ stateCount, currentsA, durationsS, law, doublingK, instant, isRadio }): Part => {
+      const roles = isRadio ? RADIO_ROLES[stateCount] : undefined;
       const stateIds = Array.from({ length: stateCount }, (_, at) => `s${at}`);
       return {
         id: `p${index}`,
         name: `Part ${index}`,
-        kind: 'other',
+        kind: roles ? 'radio' : 'other',
         restStateId: 's0',
         lowestVoltageV: quantity(1.8),
         states: stateIds.map((id, at) => ({
@@ -68,6 +78,7 @@ function arbitraryPart(index: number): fc.Arbitrary<Part> {
           // The rest state draws little, so that lives stay longer than hours.
           current: quantity(at === 0 ? (currentsA[at] ?? 0) / 10_000 : (currentsA[at] ?? 0)),
           law,
+          ...(roles ? { role: roles[at] } : {}),
           ...(doublingK === undefined ? {} : { doublingK }),
         })),
         transitions: instant ? [] : ring(stateIds, durationsS, currentsA.slice(4)),
@@ -83,6 +94,7 @@ const arbitraryDuration: fc.Arbitrary<Duration> = fc.oneof(
       .record({ octets: fc.integer({ min: 1, max: 200 }), clockHz: fc.constantFrom(100_000, 400_000, 1_000_000) })
       .map(({ octets, clockHz }): Duration => ({ kind: 'serial', octets, clockHz, overheadS: 0.00001 })),
   },
+  { weight: 1, arbitrary: arbitraryExchange },
 );
 
 function arbitraryStep(index: number, parts: readonly Part[]): fc.Arbitrary<Step> {

@@ -63,14 +63,14 @@ function interpolate(table: Table, x: number): number {
 
 function runnerOf(program: NodeProgram, routine: RoutineProgram): Runner {
   const { schedule, intervals } = routine;
-  const edges = intervals.map(({ startS, durationS, occupants }) => ({
+  const edges = intervals.map(({ startS, longestS, occupants }) => ({
     atUs: Math.round(startS * 1e6),
     excessA: occupants.reduce(
       (sumA, { draw, partIndex }) => sumA + draw.currentA - (program.parts[partIndex]?.restDraw.currentA ?? 0),
       0,
     ),
     lowestV: Math.max(0, ...occupants.map(({ lowestVoltageV }) => lowestVoltageV)),
-    durationS,
+    durationS: longestS,
   }));
   const last = intervals.at(-1);
   const endUs = last ? Math.round((last.startS + last.durationS) * 1e6) : 0;

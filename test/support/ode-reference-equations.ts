@@ -283,7 +283,7 @@ export class Reference {
     this.program.parts.forEach(({ restLowestVoltageV }, index) => {
       if (!busy.has(index)) railLimitV = Math.max(railLimitV, restLowestVoltageV);
     });
-    return { sum, railLimitV, durationS: set.at(-1)?.durationS ?? Infinity };
+    return { sum, railLimitV, durationS: set.at(-1)?.longestS ?? Infinity };
   }
 
   /** Loaded voltage of a moment; null when there is no operating point. */

@@ -90,6 +90,22 @@ describe('compileNode: phases of an exchange', () => {
     );
   });
 
+  test('shorter than half a microsecond keep their charge, and the voltage that their worst needs', () => {
+    const poll: ExchangePattern = { pattern: 'poll', pendingProbability: { typical: 1e-5 } };
+    const controller = buildPart('controller', { off: 0, on: 0.002 });
+    const step = exchangeStep(poll, { states: { controller: 'on' } });
+    const [routine] = compile(nodeWith([radioWith(allRoles), controller], [step])).routines;
+    const wait = routine?.intervals.find(({ phase }) => phase?.id === 'response-wait');
+    const planned = exchangePlan({ kind: 'exchange', ...poll }, link).phases.find(({ id }) => id === 'response-wait');
+    expect(wait).toMatchObject({ durationS: planned?.meanS, longestS: planned?.longestS });
+    expect(wait?.durationS).toBeLessThan(0.5e-6);
+    expect(wait && told(wait)).toBe('response-wait listen on');
+    const listened = routine?.segments.filter(
+      ({ activity }) => activity.kind === 'state' && activity.stateId === 'listen',
+    );
+    expect(listened?.map(({ durationTermsS }) => durationTermsS[0])).toContain(planned?.meanS);
+  });
+
   test('take the typed state where several have the role', () => {
     const radio = radioWith(allRoles);
     const loud = { id: 'loud', name: 'Loud', role: 'transmit' as const, current: { typical: 0.03 } };
