@@ -1,6 +1,7 @@
 import type { Schedule, When } from '#common/engine/index.ts';
 import { formatDuration, monthName } from '#common/units/format-duration.ts';
 import { formatNumber, formatTemperature, NO_BREAK_SPACE } from '#common/units/format-quantity.ts';
+import { perYearOf } from '#common/units/per-year.ts';
 
 /** A schedule as the end of a heading: "every 15 min", "at random, 140 times a day on average". */
 export function scheduleInWords(schedule: Schedule): string {
@@ -13,7 +14,7 @@ function bare(schedule: Schedule): string {
     case 'every':
       return `every ${period(schedule.periodS)}`;
     case 'random':
-      return `at random, ${formatNumber(schedule.meanPerDay)} times a day on average`;
+      return `at random, ${rate(schedule.meanPerDay)} on average`;
     case 'window':
       return `every ${period(schedule.periodS)} from ${clock(schedule.fromHour)} to ${clock(schedule.toHour)}`;
     case 'once':
@@ -21,6 +22,13 @@ function bare(schedule: Schedule): string {
     case 'always':
       return 'again and again';
   }
+}
+
+/** What happens less often than once a week is easier to grasp by the year. */
+function rate(meanPerDay: number): string {
+  return meanPerDay > 0 && meanPerDay < 1 / 7
+    ? `${formatNumber(perYearOf(meanPerDay))} times a year`
+    : `${formatNumber(meanPerDay)} times a day`;
 }
 
 /** "every minute" rather than "every 1 min". */

@@ -1,6 +1,7 @@
 import type { Part, Provenance, Schedule, StateRole, When } from '#common/engine/scenario/scenario.types.ts';
 import { formatDuration, MONTH_NAMES } from '#common/units/format-duration.ts';
 import { formatNumber } from '#common/units/format-quantity.ts';
+import { perYearOf } from '#common/units/per-year.ts';
 
 export const ROLES: readonly { value: StateRole; label: string }[] = [
   { value: 'sleep', label: 'sleep' },

@@ -1,3 +1,4 @@
+import { useState } from 'react';
 import type { InputProblem } from '#common/schemas/problem.ts';
 import type { Routine } from '#common/engine/scenario/scenario.types.ts';
 import { LIMITS } from '#common/schemas/limits.ts';
@@ -19,6 +20,7 @@ import {
 } from '#frontend/features/scenario-editor/model/operations/routine-operations.ts';
 import { scheduleWords } from '#frontend/features/scenario-editor/model/words.ts';
 import { TextFieldOf } from '../fields/bound-fields.tsx';
+import { BadDaysDialog } from './bad-days-dialog.tsx';
 import { MissingMoves } from './missing-moves.tsx';
 import { PickList } from './pick-list.tsx';
 import { ScheduleEditor } from './schedule-editor.tsx';
@@ -34,6 +36,8 @@ export function RoutinesSection({ problems }: { problems: readonly InputProblem[
   const { routineId, stepId } = useEditorState((state) => state.selection);
   const routine = routines.find(({ id }) => id === routineId) ?? routines[0];
   const step = routine?.steps.find(({ id }) => id === stepId);
+  const [isChoosing, setChoosing] = useState(false);
+  const isFull = routines.length >= LIMITS.routines;
   const add = (): void => {
     const id = idOfNewRoutine(store.getState().document, 'New routine');
     store.edit({
@@ -65,8 +69,12 @@ export function RoutinesSection({ problems }: { problems: readonly InputProblem[
           })
         }
       >
-        <AddButton label="Add a routine" isFull={routines.length >= LIMITS.routines} onAdd={add} />
+        <span className="flex flex-wrap gap-x-5">
+          <AddButton label="Add a routine" isFull={isFull} onAdd={add} />
+          <AddButton label="Bad days" isFull={isFull} onAdd={() => setChoosing(true)} />
+        </span>
       </PickList>
+      {isChoosing && <BadDaysDialog onClose={() => setChoosing(false)} />}
       {routine ? (
         <div className="mt-4">
           <RoutineHead routine={routine} />

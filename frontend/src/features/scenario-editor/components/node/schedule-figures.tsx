@@ -1,9 +1,11 @@
 import type { Routine, Schedule } from '#common/engine/scenario/scenario.types.ts';
 import type { ParseOptions } from '#common/units/parse-quantity.ts';
-import { DELAY, HOUR, PER_DAY, PERIOD } from '#frontend/features/scenario-editor/model/figure-options.ts';
+import { perDayOf, perYearOf } from '#common/units/per-year.ts';
+import { DELAY, HOUR, PER_DAY, PERIOD, TIMES_A_YEAR } from '#frontend/features/scenario-editor/model/figure-options.ts';
 import { updateRoutine } from '#frontend/features/scenario-editor/model/operations/routine-operations.ts';
 import { withOptional } from '#frontend/features/scenario-editor/model/operations/supply-operations.ts';
 import { FigureField } from '../fields/bound-fields.tsx';
+import { KeepAliveFields, PeriodThatCounts } from './keep-alive-fields.tsx';
 
 interface Row {
   key: string;
@@ -55,6 +57,16 @@ const ROWS: Record<Schedule['kind'], readonly Row[]> = {
         schedule.kind === 'random' && meanPerDay !== undefined ? { ...schedule, meanPerDay } : schedule,
     },
     {
+      key: 'timesAYear',
+      label: 'which is, a year',
+      options: TIMES_A_YEAR,
+      read: (schedule) => (schedule.kind === 'random' ? perYearOf(schedule.meanPerDay) : undefined),
+      write: (schedule, timesAYear) =>
+        schedule.kind === 'random' && timesAYear !== undefined
+          ? { ...schedule, meanPerDay: perDayOf(timesAYear) }
+          : schedule,
+    },
+    {
       key: 'busiestPerDay',
       label: 'On the busiest day',
       hint: 'shown, not counted',
@@ -81,10 +93,21 @@ const ROWS: Record<Schedule['kind'], readonly Row[]> = {
 
 /** The figures of a routine's schedule, by its kind. */
 export function ScheduleFigures({ routine, field }: { routine: Routine; field: string }) {
-  const { schedule, id, name } = routine;
+  const { schedule } = routine;
   if (schedule.kind === 'always') {
     return <p className="self-center text-small text-muted">One cycle after the other, without a pause.</p>;
   }
+  const hasKeepAlive = schedule.kind === 'every' && schedule.keepAlive !== undefined;
+  return (
+    <>
+      {hasKeepAlive && <PeriodThatCounts schedule={schedule} />}
+      {!hasKeepAlive && <Rows routine={routine} field={field} />}
+      {schedule.kind === 'every' && <KeepAliveFields routine={routine} schedule={schedule} field={field} />}
+    </>
+  );
+}
+
+function Rows({ routine: { schedule, id, name }, field }: { routine: Routine; field: string }) {
   return ROWS[schedule.kind].map(({ key, label, hint, options, isOptional, read, write }) => (
     <FigureField
       key={`${schedule.kind} ${key}`}
