@@ -117,3 +117,72 @@ function routine(index: number, parts: readonly Part[]): Routine {
     })),
   };
 }
+
+/** The same cell and climate under a node of three parts and four routines, of whose steps twenty are acknowledged exchanges. */
+export function linkScenario(): Scenario {
+  const base = benchScenario({ law: 'constant-current', regulator: { kind: 'none' } });
+  const [sensor, controller] = base.node.parts;
+  const parts = [radio(), ...(controller ? [controller] : []), ...(sensor ? [sensor] : [])];
+  const link = {
+    phy: 'oqpsk-2450' as const,
+    busyProbability: { typical: 0.1 },
+    receivedLevelDbm: { typical: -92 },
+    sensitivityDbm: -96,
+  };
+  const routines = Array.from({ length: 4 }, (_, index): Routine => ({
+    id: `report${index}`,
+    name: `Report ${index}`,
+    enabled: true,
+    schedule: { kind: 'every', periodS: 900 * (index + 1) },
+    steps: Array.from({ length: 5 }, (_, step) => ({
+      id: `send${step}`,
+      name: `Send ${step}`,
+      states: { [controller?.id ?? '']: 'idle' },
+      duration: { kind: 'exchange', pattern: 'acknowledged', payloadOctets: 10 + 4 * step },
+    })),
+  }));
+  return { ...base, name: 'Bench of the link', node: { ...base.node, parts, routines, link } };
+}
+
+function radio(): Part {
+  const state = (id: NonNullable<State['role']>, currentA: number): State => ({
+    id,
+    name: id,
+    role: id,
+    current: { typical: currentA },
+  });
+  const move = (fromStateId: string, toStateId: string, durationS = 0): Part['transitions'][number] => ({
+    fromStateId,
+    toStateId,
+    durationS: { typical: durationS },
+    current: { typical: 0.003 },
+  });
+  const air = ['listen', 'receive', 'transmit'];
+  return {
+    id: 'radio',
+    name: 'Radio',
+    kind: 'radio',
+    restStateId: 'sleep',
+    lowestVoltageV: { typical: 1.8 },
+    states: [
+      state('sleep', 2e-7),
+      state('idle', 4e-4),
+      state('synthesiser', 0.006),
+      state('listen', 0.012),
+      state('receive', 0.013),
+      state('transmit', 0.014),
+    ],
+    transitions: [
+      move('sleep', 'idle', 0.0005),
+      move('idle', 'synthesiser', 0.00011),
+      move('idle', 'sleep'),
+      ...air.flatMap((from) => [
+        move('synthesiser', from),
+        move(from, 'synthesiser'),
+        move(from, 'idle'),
+        move(from, 'sleep'),
+        ...air.filter((to) => to !== from).map((to) => move(from, to)),
+      ]),
+    ],
+  };
+}

@@ -7,7 +7,7 @@ import type { Scenario } from '#common/engine/index.ts';
 import { compileScenario } from '#common/engine/forecast/compile-scenario.ts';
 import { runMeanCurrent } from '#common/engine/forecast/run-mean-current.ts';
 import { referenceLife } from '#test/support/ode-reference.ts';
-import { benchScenario } from './bench-scenario.ts';
+import { benchScenario, linkScenario } from './bench-scenario.ts';
 
 const YEAR_S = 31_557_600;
 
@@ -91,3 +91,4 @@ benchOne(
     regulator: { kind: 'switching', outputV: 1.95, quiescentA: 1e-6, efficiency: 0.9, minimumInputV: 1.8 },
   }),
 );
+benchOne('20 link steps', linkScenario());

@@ -70,7 +70,7 @@ function intervalOf(
 ): Interval {
   const { id, startUs, durationS, occupants } = own;
   // A piece of an exchange may last as long as the whole at the worst; a piece of anything else is what it is.
-  const isWhole = durationS === wholeS || phase !== null;
+  const isVaried = worstS !== wholeS || longestS !== wholeS;
   return {
     id,
     kind,
@@ -79,8 +79,8 @@ function intervalOf(
     phase: kind === 'step' ? phase : null,
     startS: fromMicros(startUs),
     durationS,
-    worstS: isWhole ? worstS : durationS,
-    longestS: isWhole ? longestS : durationS,
+    worstS: isVaried ? worstS : durationS,
+    longestS: isVaried ? longestS : durationS,
     occupants,
   };
 }
