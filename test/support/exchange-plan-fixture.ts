@@ -79,7 +79,7 @@ export function acknowledgedPlan(changes: Partial<ExchangePlan> = {}): ExchangeP
       },
     ],
     meanS: 0.004534,
-    worstS: 0.162944,
+    worstS: 0.162592,
     worstAttempts: 4,
     frame: {
       fields: [

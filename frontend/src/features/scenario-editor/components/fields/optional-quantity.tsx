@@ -1,4 +1,4 @@
-import { useState } from 'react';
+import { useState, type ReactNode } from 'react';
 import type { Quantity, Scenario } from '#common/engine/scenario/scenario.types.ts';
 import type { ParseOptions } from '#common/units/parse-quantity.ts';
 import { orderProblem, typicalOrNew, withSide } from '#frontend/features/scenario-editor/model/quantity-sides.ts';
@@ -15,11 +15,23 @@ interface Props {
   quantity: Quantity | undefined;
   options: ParseOptions;
   isOptional: boolean;
+  /** Shown with the origin below the figure. */
+  children?: ReactNode;
   change: (document: Scenario, update: (before: Quantity | undefined) => Quantity | undefined) => Scenario;
 }
 
 /** A figure that may be left out: with its origin where there is one, and its range on demand. */
-export function OptionalQuantity({ field, title, label, hint, quantity, options, isOptional, change }: Props) {
+export function OptionalQuantity({
+  field,
+  title,
+  label,
+  hint,
+  quantity,
+  options,
+  isOptional,
+  change,
+  children,
+}: Props) {
   const [isOpen, setOpen] = useState(false);
   const hasRange = quantity?.min !== undefined || quantity?.max !== undefined;
   const isRangeShown = quantity !== undefined && (hasRange || isOpen);
@@ -58,6 +70,7 @@ export function OptionalQuantity({ field, title, label, hint, quantity, options,
             )}
           </>
         )}
+        {children}
       </FigureField>
       {isRangeShown && <Range {...{ field, label, quantity, options, change }} />}
     </div>

@@ -38,7 +38,7 @@ export function DescriptorField({ descriptor, holder }: { descriptor: FieldDescr
   const value = valueAt(holder.values, key);
   const common = { field, label, editLabel: `${label.toLowerCase()} of ${holder.of}` };
   return (
-    <div className="min-w-0">
+    <div className="min-w-0 pb-1.5">
       {descriptor.type === 'figure' && (
         <FigureField
           {...common}
@@ -47,7 +47,9 @@ export function DescriptorField({ descriptor, holder }: { descriptor: FieldDescr
           isOptional={descriptor.isOptional ?? false}
           change={(document, next) => holder.write(document, key, () => next)}
           {...(hint === undefined ? {} : { hint })}
-        />
+        >
+          <CautionText text={caution} />
+        </FigureField>
       )}
       {descriptor.type === 'quantity' && (
         <OptionalQuantity
@@ -59,7 +61,9 @@ export function DescriptorField({ descriptor, holder }: { descriptor: FieldDescr
           options={descriptor.options}
           isOptional={descriptor.isOptional ?? false}
           change={(document, update) => holder.write(document, key, (before) => update(quantityOf(before)))}
-        />
+        >
+          <CautionText text={caution} />
+        </OptionalQuantity>
       )}
       {descriptor.type === 'choice' && (
         <ChoiceField
@@ -71,9 +75,13 @@ export function DescriptorField({ descriptor, holder }: { descriptor: FieldDescr
         />
       )}
       {descriptor.type === 'quantity' && problem !== undefined && <p className="text-small text-rust">{problem}</p>}
-      {caution !== undefined && <p className="pb-2 text-small text-caution">{caution}</p>}
+      {descriptor.type === 'choice' && <CautionText text={caution} />}
     </div>
   );
+}
+
+function CautionText({ text }: { text: string | undefined }) {
+  return text === undefined ? null : <p className="min-w-0 text-small text-caution">{text}</p>;
 }
 
 const quantityOf = (value: unknown): Quantity | undefined => (isQuantity(value) ? value : undefined);

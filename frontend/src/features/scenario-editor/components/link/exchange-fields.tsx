@@ -56,7 +56,7 @@ function RadioChoice({ field, stepName, exchange, change }: ExchangeFieldsProps)
   const parts = useDocument((document) => document.node.parts);
   const radios = parts.filter(({ kind }) => kind === 'radio');
   const only = radios.length === 1 ? radios[0] : undefined;
-  const usual = only ? `the only radio: ${only.name}` : radios.length === 0 ? 'there is no radio' : 'choose one';
+  const usual = only ? `${only.name}, the only one` : radios.length === 0 ? 'there is no radio' : 'choose one';
   const offered = parts.filter(({ id, kind }) => kind === 'radio' || id === exchange.radioPartId);
   return (
     <ChoiceField

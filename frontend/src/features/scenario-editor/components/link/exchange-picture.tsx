@@ -1,6 +1,7 @@
 import { useMemo, useState, type ReactNode } from 'react';
 import type { ExchangePlan } from '#common/engine/link/exchange-plan.types.ts';
 import {
+  isOneExchange,
   meanRow,
   MOST_ATTEMPTS_DRAWN,
   worstRow,
@@ -34,6 +35,11 @@ export function ExchangePicture({ plan }: { plan: ExchangePlan }) {
       {worstAttempts > MOST_ATTEMPTS_DRAWN && (
         <p className="mt-1 text-small text-muted">
           The {worstAttempts} attempts at worst are drawn as one: each phase with all its time.
+        </p>
+      )}
+      {!isOneExchange(rows.worst, plan) && (
+        <p className="mt-1 text-small text-muted">
+          At worst each phase is drawn at its own longest; no single exchange has them all.
         </p>
       )}
       <PhaseTable plan={plan} selected={selected} onSelect={setSelected} />

@@ -1,4 +1,5 @@
 import type { ExchangePhase, ExchangePlan } from '#common/engine/link/exchange-plan.types.ts';
+import { hasAlternatives } from '#frontend/features/scenario-editor/model/link/exchange-picture.ts';
 import { phaseTime } from '#frontend/features/scenario-editor/model/link/figure-words.ts';
 import { ROLES } from '#frontend/features/scenario-editor/model/words.ts';
 import { patternOfRole } from '#frontend/lib/activity-patterns.ts';
@@ -14,47 +15,53 @@ interface Props {
 /** The same phases as numbers, in the same order; each opens how it comes about. */
 export function PhaseTable({ plan, selected, onSelect }: Props) {
   return (
-    <table aria-label="Phases of the exchange" className="mt-3 w-full text-left text-small tabular-nums">
-      <thead>
-        <tr className="border-b border-line">
-          <th scope="col" className="py-1.5 pr-3 font-bold">
-            Phase
-          </th>
-          <th scope="col" className="py-1.5 pr-3 font-bold max-sm:hidden">
-            Radio
-          </th>
-          <th scope="col" className="py-1.5 pr-3 text-right font-bold">
-            On average
-          </th>
-          <th scope="col" className="py-1.5 pr-3 text-right font-bold">
-            At worst
-          </th>
-          <th scope="col" className="py-1.5 text-right font-bold max-sm:hidden">
-            At once
-          </th>
-        </tr>
-      </thead>
-      <tbody>
-        {plan.phases.map((phase, index) => (
-          <PhaseLines
-            key={phase.id}
-            phase={phase}
-            index={index}
-            isOpen={index === selected}
-            onToggle={() => onSelect(index === selected ? null : index)}
-          />
-        ))}
-        <tr className="font-bold">
-          <th scope="row" className="py-1.5 pr-3 text-left font-bold">
-            In all
-          </th>
-          <td className="max-sm:hidden" />
-          <td className="py-1.5 pr-3 text-right">{phaseTime(plan.meanS)}</td>
-          <td className="py-1.5 pr-3 text-right">{phaseTime(plan.worstS)}</td>
-          <td className="max-sm:hidden" />
-        </tr>
-      </tbody>
-    </table>
+    <>
+      <table aria-label="Phases of the exchange" className="mt-3 w-full text-left text-small tabular-nums">
+        <thead>
+          <tr className="border-b border-line">
+            <th scope="col" className="py-1.5 pr-3 font-bold">
+              Phase
+            </th>
+            <th scope="col" className="py-1.5 pr-3 font-bold max-sm:hidden">
+              Radio
+            </th>
+            <th scope="col" className="py-1.5 pr-3 text-right font-bold">
+              On average
+            </th>
+            <th scope="col" className="py-1.5 pr-3 text-right font-bold">
+              At worst
+            </th>
+            <th scope="col" className="py-1.5 text-right font-bold max-sm:hidden">
+              At once
+            </th>
+          </tr>
+        </thead>
+        <tbody>
+          {plan.phases.map((phase, index) => (
+            <PhaseLines
+              key={phase.id}
+              phase={phase}
+              index={index}
+              isOpen={index === selected}
+              onToggle={() => onSelect(index === selected ? null : index)}
+            />
+          ))}
+          <tr className="font-bold">
+            <th scope="row" className="py-1.5 pr-3 text-left font-bold">
+              In all
+            </th>
+            <td className="max-sm:hidden" />
+            <td className="py-1.5 pr-3 text-right">{phaseTime(plan.meanS)}</td>
+            <td className="py-1.5 pr-3 text-right">{phaseTime(plan.worstS)}</td>
+            <td className="max-sm:hidden" />
+          </tr>
+        </tbody>
+      </table>
+      <p className="mt-1 min-h-5 text-small text-muted">
+        {hasAlternatives(plan) &&
+          'At worst not all phases come in the same exchange, so they add up to more than the whole.'}
+      </p>
+    </>
   );
 }
 

@@ -273,7 +273,7 @@ export const EXCHANGES: Readonly<Record<PatternId, ExchangeKind>> = {
     fields: [
       {
         ...PAYLOAD,
-        label: 'Payload, header of the network included',
+        label: 'Payload with headers',
         type: 'figure',
         options: OCTETS,
         isOptional: false,

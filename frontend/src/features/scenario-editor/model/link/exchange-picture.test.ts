@@ -1,6 +1,14 @@
 import { describe, expect, test } from 'vitest';
 import { acknowledgedPlan } from '#test/support/exchange-plan-fixture.ts';
-import { leaders, meanRow, MOST_ATTEMPTS_DRAWN, rulerTicks, worstRow } from './exchange-picture.ts';
+import {
+  hasAlternatives,
+  isOneExchange,
+  leaders,
+  meanRow,
+  MOST_ATTEMPTS_DRAWN,
+  rulerTicks,
+  worstRow,
+} from './exchange-picture.ts';
 import { drawnFields } from './frame-picture.ts';
 
 describe('meanRow', () => {
@@ -20,18 +28,32 @@ describe('worstRow', () => {
   test('draws what is interrupted in each attempt and what is not once', () => {
     const plan = acknowledgedPlan();
     const { stretches, totalS, attempts } = worstRow(plan);
-    expect(totalS).toBeCloseTo(plan.worstS, 9);
+    expect(totalS).toBeCloseTo(plan.worstS, 12);
     expect(attempts).toHaveLength(4);
     const namesOf = (attempt: number | null) =>
       stretches.filter((stretch) => stretch.attempt === attempt).map(({ phase }) => plan.phases[phase]?.id);
-    expect(namesOf(null)).toEqual(['crystal-start', 'acknowledgement']);
+    expect(namesOf(null)).toEqual(['crystal-start']);
     expect(namesOf(3)).toEqual(['backoff', 'assessment', 'turnaround', 'frame', 'acknowledgement-wait']);
   });
 
   test('draws attempts as one where they are too many to tell apart', () => {
     const { stretches, attempts } = worstRow(acknowledgedPlan({ worstAttempts: MOST_ATTEMPTS_DRAWN + 1 }));
     expect(attempts).toEqual([]);
-    expect(stretches).toHaveLength(7);
+    expect(stretches).toHaveLength(6);
+  });
+});
+
+describe('phases that exclude each other', () => {
+  test('are left out of the worst row where the others make the longest exchange', () => {
+    const plan = acknowledgedPlan();
+    expect(hasAlternatives(plan)).toBe(true);
+    expect(isOneExchange(worstRow(plan), plan)).toBe(true);
+  });
+
+  test('are drawn all where no choice of them makes the longest exchange', () => {
+    const plan = acknowledgedPlan({ worstS: 0.1234 });
+    expect(isOneExchange(worstRow(plan), plan)).toBe(false);
+    expect(worstRow(plan).stretches.some(({ phase }) => plan.phases[phase]?.id === 'acknowledgement')).toBe(true);
   });
 });
 

@@ -36,8 +36,9 @@ export function meanRow({ phases }: ExchangePlan): PictureRow {
  * The phases at the worst. What happens in one stretch is drawn once; what is interrupted comes in each attempt, and its
  * time is shared out evenly between them.
  */
-export function worstRow({ phases, worstAttempts }: ExchangePlan): PictureRow {
-  const happening = phases.flatMap((phase, index) => (phase.worstS > 0 ? [{ phase, index }] : []));
+export function worstRow(plan: ExchangePlan): PictureRow {
+  const { worstAttempts } = plan;
+  const happening = phasesAtWorst(plan);
   const isRepeated = ({ worstS, longestS }: ExchangePhase): boolean => longestS < worstS;
   const repeated = happening.filter(({ phase }) => isRepeated(phase));
   const attempts = worstAttempts > MOST_ATTEMPTS_DRAWN || repeated.length === 0 ? 1 : worstAttempts;
@@ -55,6 +56,47 @@ export function worstRow({ phases, worstAttempts }: ExchangePlan): PictureRow {
     once(happening.slice(first).filter(({ phase }) => !isRepeated(phase)));
   }
   return laidOut(pieces);
+}
+
+interface Placed {
+  phase: ExchangePhase;
+  index: number;
+}
+
+/** At most so many phases are taken to be missing from the longest exchange. */
+const MOST_MISSING = 3;
+
+/**
+ * The phases of which the longest exchange consists. Some exclude each other: the longest exchange waits for an acknowledgement
+ * that does not come. They are those whose longest times together make the longest duration; where none do, all phases.
+ */
+function phasesAtWorst({ phases, worstS }: ExchangePlan): Placed[] {
+  const all = phases.flatMap((phase, index) => (phase.worstS > 0 ? [{ phase, index }] : []));
+  for (let missing = 0; missing <= MOST_MISSING; missing += 1) {
+    const found = without(all, missing).find((kept) => Math.abs(sumOf(kept) - worstS) <= 1e-9 + 1e-9 * worstS);
+    if (found) return found;
+  }
+  return all;
+}
+
+const sumOf = (placed: readonly Placed[]): number => placed.reduce((sum, { phase }) => sum + phase.worstS, 0);
+
+/** Every list that leaves out so many of the items. */
+function without<T>(items: readonly T[], missing: number): T[][] {
+  if (missing === 0) return [[...items]];
+  return items.flatMap((_, at) =>
+    without(items.slice(at + 1), missing - 1).map((kept) => [...items.slice(0, at), ...kept]),
+  );
+}
+
+/** Whether the phases' longest times add up to more than the longest exchange, since some exclude each other. */
+export function hasAlternatives({ phases, worstS }: ExchangePlan): boolean {
+  return phases.reduce((sum, phase) => sum + phase.worstS, 0) > worstS + 1e-9;
+}
+
+/** Whether the row of the worst is the longest exchange, and not each phase at its longest. */
+export function isOneExchange(row: PictureRow, { worstS }: ExchangePlan): boolean {
+  return Math.abs(row.totalS - worstS) <= 1e-8 + 1e-8 * worstS;
 }
 
 function laidOut(pieces: readonly Piece[]): PictureRow {
