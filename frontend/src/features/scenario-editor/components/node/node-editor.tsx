@@ -1,6 +1,7 @@
 import { memo } from 'react';
 import type { InputProblem } from '#common/schemas/problem.ts';
 import { LeakagesGrid } from './leakages-grid.tsx';
+import { LinkSection } from './link-section.tsx';
 import { MaximaSection } from './maxima-section.tsx';
 import { PartsSection } from './parts-section.tsx';
 import { RoutinesSection } from './routines-section.tsx';
@@ -11,6 +12,7 @@ export const NodeEditor = memo(function NodeEditor({ problems }: { problems: rea
   return (
     <>
       <RoutinesSection problems={problems} />
+      <LinkSection />
       <PartsSection />
       <Section id="leakages" title="Leakages" note="currents that always flow: a divider, a supervisor, the board">
         <LeakagesGrid />
