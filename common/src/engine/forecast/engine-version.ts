@@ -1,2 +1,2 @@
 /** Stored with each forecast; it changes whenever the same scenario may give other numbers. */
-export const ENGINE_VERSION = '1.0.0';
+export const ENGINE_VERSION = '1.1.0';

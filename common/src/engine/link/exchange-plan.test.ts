@@ -104,6 +104,32 @@ describe('exchangePlan of every pattern', () => {
     );
   });
 
+  test('takes no less charge the more frames are lost', () => {
+    const currentA = {
+      sleep: 2e-7,
+      idle: 4e-4,
+      synthesiser: 0.006,
+      listen: 0.012,
+      receive: 0.013,
+      transmit: 0.014,
+      active: 0,
+    };
+    const chargeC = ({ phases }: ExchangePlan): number =>
+      phases.reduce((sumC, { role, meanS }) => sumC + currentA[role] * meanS, 0);
+    const loss = fc.double({ min: 0, max: 1, noNaN: true });
+    const sent = everyPattern.filter(
+      (candidate) =>
+        ['acknowledged', 'unacknowledged', 'listen-before-talk'].includes(candidate.pattern) ||
+        (candidate.pattern === 'slot' && candidate.slotUse === 'transmit'),
+    );
+    fc.assert(
+      fc.property(fc.constantFrom(...sent), loss, loss, (pattern, a, b) => {
+        const at = (typical: number) => chargeC(planOf(pattern, { settings: { frameErrorRate: { typical } } }));
+        expect(at(Math.max(a, b))).toBeGreaterThanOrEqual(at(Math.min(a, b)) * (1 - 1e-12));
+      }),
+    );
+  });
+
   const roles: [ExchangePattern['pattern'], string[]][] = [
     [
       'acknowledged',
