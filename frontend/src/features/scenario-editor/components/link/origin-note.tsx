@@ -3,7 +3,7 @@ import type { Origin } from '#common/engine/link/exchange-plan.types.ts';
 /** How a figure comes about: the formula, and who gives it. */
 export function OriginNote({ formula, source }: Origin) {
   return (
-    <dl className="grid max-w-[60rem] gap-x-4 text-small sm:grid-cols-[auto_minmax(0,1fr)]">
+    <dl className="grid max-w-[60rem] grid-cols-[auto_minmax(0,1fr)] gap-x-4 text-small">
       <dt className="text-muted">Formula</dt>
       <dd className="min-w-0 [overflow-wrap:anywhere]">{formula}</dd>
       <dt className="text-muted">Source</dt>

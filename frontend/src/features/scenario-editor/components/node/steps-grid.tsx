@@ -18,6 +18,7 @@ import {
   updateStep,
   withPartState,
 } from '#frontend/features/scenario-editor/model/operations/routine-operations.ts';
+import { isLedByLink } from '#frontend/features/scenario-editor/model/operations/exchange-operations.ts';
 import { withOptional } from '#frontend/features/scenario-editor/model/operations/supply-operations.ts';
 import { REPEATS } from '#frontend/features/scenario-editor/model/figure-options.ts';
 import { FigureField, TextFieldOf } from '../fields/bound-fields.tsx';
@@ -154,7 +155,10 @@ const StepRow = memo(function StepRow({ routineId, step, parts, isSelected }: St
             editLabel={`state of ${part.name} in ${step.name}`}
             isCell
             value={step.states[part.id] ?? ''}
-            choices={[{ value: '', label: 'rest' }, ...part.states.map(({ id, name }) => ({ value: id, label: name }))]}
+            choices={[
+              { value: '', label: isLedByLink(step, part, parts) ? 'by the link' : 'rest' },
+              ...part.states.map(({ id, name }) => ({ value: id, label: name })),
+            ]}
             change={(document, stateId) =>
               updateStep(document, routineId, step.id, (before) => withPartState(before, part.id, stateId))
             }

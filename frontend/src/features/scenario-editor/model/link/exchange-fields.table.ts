@@ -43,8 +43,8 @@ const PSDU: FieldDescriptor = {
 const ACK: FieldDescriptor = {
   type: 'figure',
   key: 'ackPsduOctets',
-  label: 'Acknowledgement (PSDU)',
-  hint: 'empty: the shortest',
+  label: 'Acknowledgement',
+  hint: 'PSDU; empty: the shortest',
   options: OCTETS,
   isOptional: true,
 };

@@ -1,8 +1,18 @@
 import { describe, expect, test } from 'vitest';
+import type { Duration, Step } from '#common/engine/scenario/scenario.types.ts';
 import { editorScenario } from '#test/support/editor-scenario.ts';
 import { removePart } from './part-operations.ts';
-import { exchangeOfPattern, newExchange, newLoading, withExchangeValue, withLink } from './exchange-operations.ts';
+import {
+  exchangeOfPattern,
+  isLedByLink,
+  newExchange,
+  newLoading,
+  withExchangeValue,
+  withLink,
+} from './exchange-operations.ts';
 import { updateStep } from './routine-operations.ts';
+
+const STEP: Step = { id: 'send', name: 'Send', states: {}, duration: newExchange(undefined) };
 
 describe('newExchange', () => {
   test('chooses a PHY only where the node has none', () => {
@@ -30,6 +40,16 @@ describe('withExchangeValue', () => {
     expect(whole).toMatchObject({ psduOctets: 35 });
     expect(whole).not.toHaveProperty('payloadOctets');
     expect(withExchangeValue(whole, 'payloadOctets', 24)).not.toHaveProperty('psduOctets');
+  });
+});
+
+describe('isLedByLink', () => {
+  test('is so of the only radio, unless the exchange is one frame alone', () => {
+    const { parts } = editorScenario().node;
+    const led = (duration: Duration) => parts.filter((part) => isLedByLink({ ...STEP, duration }, part, parts));
+    expect(led(newExchange(undefined)).map(({ id }) => id)).toEqual(['radio']);
+    expect(led({ ...newExchange(undefined), radioPartId: 'sensor' }).map(({ id }) => id)).toEqual(['sensor']);
+    expect(led(exchangeOfPattern(newExchange(undefined), 'frame'))).toEqual([]);
   });
 });
 

@@ -4,6 +4,7 @@ import type {
   FrameLoading,
   LinkSettings,
   Part,
+  Step,
 } from '#common/engine/scenario/scenario.types.ts';
 import { EXCHANGES, type PatternId } from '../link/exchange-fields.table.ts';
 import { valueAt, withValueAt } from '../link/link-values.ts';
@@ -65,6 +66,13 @@ export function newLoading(parts: readonly Part[]): FrameLoading | undefined {
 /** The first state of a part that is not rest, else its only one. */
 export function workingState(part: Part): Part['states'][number] | undefined {
   return part.states.find(({ id }) => id !== part.restStateId) ?? part.states[0];
+}
+
+/** Whether an exchange gives the states of a part: that of its radio, phase by phase. One frame alone takes the state typed. */
+export function isLedByLink({ duration }: Step, part: Part, parts: readonly Part[]): boolean {
+  if (duration.kind !== 'exchange' || duration.pattern === 'frame') return false;
+  if (duration.radioPartId !== undefined) return duration.radioPartId === part.id;
+  return part.kind === 'radio' && parts.filter(({ kind }) => kind === 'radio').length === 1;
 }
 
 /** Applies a change to exchanges only; other durations stay as they are. */
