@@ -1,9 +1,9 @@
 import { Chart, LinearScale, LineController, LineElement, PointElement } from 'chart.js';
 import { useEffect, useRef, type KeyboardEvent, type PointerEvent } from 'react';
 import type { DekadPoint } from '#common/engine/index.ts';
-import { useThemeKey } from '../hooks/use-theme-key.ts';
+import { readChartTheme } from '#frontend/components/chart/chart-theme.ts';
+import { useThemeKey } from '#frontend/hooks/use-theme-key.ts';
 import { chartConfig, refreshChart, type ChartContent } from '../model/chart-config.ts';
-import { readChartTheme } from '../model/chart-theme.ts';
 import { dekadInWords, valuesInWords, type CurvePicture, type TimeAxis } from '../model/curves.ts';
 
 Chart.register(LinearScale, LineController, LineElement, PointElement);

@@ -1,6 +1,6 @@
 import type { Chart, ChartConfiguration, Plugin } from 'chart.js';
-import { formatNumber } from '#common/units/format-quantity.ts';
-import type { ChartTheme } from './chart-theme.ts';
+import { linearScale } from '#frontend/components/chart/chart-scale.ts';
+import type { ChartTheme } from '#frontend/components/chart/chart-theme.ts';
 import type { CurvePicture, TimeAxis } from './curves.ts';
 
 export type LineChart = ChartConfiguration<'line', { x: number; y: number }[]>;
@@ -39,8 +39,8 @@ export function chartConfig(content: ChartContent, theme: ChartTheme): LineChart
       font: theme.font,
       layout: { padding: { top: 6, right: picture.curves.length > 1 ? 94 : 10 } },
       scales: {
-        x: { ...scale(theme, time.title), min: 0, max: time.max },
-        y: { ...scale(theme, picture.unit), min: picture.min, max: picture.max },
+        x: { ...linearScale(theme, time.title), min: 0, max: time.max },
+        y: { ...linearScale(theme, picture.unit), min: picture.min, max: picture.max },
       },
     },
     plugins: [endLabels(content, theme), axisMarks(content, theme), cursor(content, theme)],
@@ -60,22 +60,6 @@ export function refreshChart(chart: Chart<'line', { x: number; y: number }[]>, c
 
 function pointsOf({ picture, time }: ChartContent, curve: number): { x: number; y: number }[] {
   return (picture.curves[curve]?.values ?? []).map((y, i) => ({ x: time.values[i] ?? 0, y }));
-}
-
-function scale(theme: ChartTheme, title: string) {
-  return {
-    type: 'linear' as const,
-    title: { display: true, text: title, color: theme.tones.muted, font: theme.font, padding: 2 },
-    ticks: {
-      color: theme.tones.muted,
-      font: theme.font,
-      maxTicksLimit: 7,
-      includeBounds: false,
-      callback: (value: number | string) => formatNumber(Number(value)),
-    },
-    grid: { color: theme.grid, tickColor: theme.axis, tickLength: 4 },
-    border: { color: theme.axis },
-  };
 }
 
 /** Names of the lines at their right ends, moved apart where they would overlap. */

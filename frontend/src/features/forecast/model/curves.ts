@@ -1,11 +1,12 @@
 import type { DekadPoint, Forecast } from '#common/engine/index.ts';
 import { monthName } from '#common/units/format-duration.ts';
 import { MAH_C, MONTH_S, YEAR_S } from '#common/units/si.ts';
+import type { ChartTone } from '#frontend/components/chart/chart-theme.ts';
 import { celsius, charge, fineVolts } from './figures.ts';
 
 /** How a line is told apart, in grey as well: by dashes and weight first, by colour second. */
 export interface CurveStyle {
-  tone: 'ink' | 'accent' | 'rust' | 'frost' | 'muted';
+  tone: ChartTone;
   dash: readonly number[];
   widthPx: number;
 }

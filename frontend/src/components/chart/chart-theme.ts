@@ -1,8 +1,9 @@
-import type { CurveStyle } from './curves.ts';
+/** What a line is drawn in. */
+export type ChartTone = 'ink' | 'accent' | 'rust' | 'frost' | 'muted';
 
 /** Colours and type of the charts, read from the page so that both themes hold. */
 export interface ChartTheme {
-  tones: Record<CurveStyle['tone'], string>;
+  tones: Record<ChartTone, string>;
   grid: string;
   axis: string;
   paper: string;
