@@ -77,14 +77,14 @@ function FieldTicks({ drawn, isSelected, onSelect }: TicksProps) {
     <button
       type="button"
       aria-expanded={isSelected}
-      aria-label={`${field.name}, ${octets(field.octets)}, ${placeWords(drawn)}`}
       onClick={onSelect}
       className={`block max-w-full text-left hover:text-accent ${isSelected ? 'text-accent' : ''}`}
     >
       <span className={`block text-[0.6875rem] leading-4 whitespace-nowrap ${isSelected ? 'font-extrabold' : ''}`}>
         {field.name}
+        <span className="sr-only">{`: ${octets(field.octets)}, ${placeWords(drawn)}`}</span>
       </span>
-      <span className="flex flex-wrap gap-y-1 border-ink/70">
+      <span aria-hidden="true" className="flex flex-wrap gap-y-1">
         {Array.from({ length: drawn.drawn }, (_, index) => (
           <span
             key={index}
@@ -96,7 +96,7 @@ function FieldTicks({ drawn, isSelected, onSelect }: TicksProps) {
           <span className="self-center pl-1.5 text-[0.6875rem]">and {octets(field.octets - drawn.drawn)} more</span>
         )}
       </span>
-      <span className="block text-[0.6875rem] leading-4 text-muted tabular-nums">
+      <span aria-hidden="true" className="block text-[0.6875rem] leading-4 text-muted tabular-nums">
         {first === last ? first : `${first}–${last}`}
       </span>
     </button>
