@@ -48,9 +48,13 @@ export function frameLayout(phy: Phy, size: FrameSize, link: LinkSettings): Fram
   for (const { octets } of outer) outerOctets += octets;
   const { psduOctets, largestPayloadOctets } = inner;
   const airOctets = outerOctets + psduOctets;
-  const fields = [...outer, ...inner.fields].map((sized) => ({
-    ...sized,
-    airtimeS: octetsAirtimeS(phy, sized.octets, forwardErrorCorrection === true && !SYNCHRONISATION.has(sized.id)),
+  const fields = [...outer, ...inner.fields].map(({ id, name, octets, formula, source }) => ({
+    id,
+    name,
+    octets,
+    airtimeS: octetsAirtimeS(phy, octets, forwardErrorCorrection === true && !SYNCHRONISATION.has(id)),
+    formula,
+    source,
   }));
   return { fields, psduOctets, airOctets, airtimeS, largestPayloadOctets };
 }

@@ -139,10 +139,11 @@ function phaseModel(
   { id, name, meanS, worstS, longestS }: ExchangePhase,
   { radio, state }: { radio: PartModel; state: StateModel | undefined },
 ): StepModel {
-  const named = [...own.named];
+  const named = own.named.slice();
   named[radio.index] = state;
   return {
-    ...own,
+    step: own.step,
+    path: own.path,
     phase: { id, name },
     radioIndex: radio.index,
     suffix: `/${id}`,
