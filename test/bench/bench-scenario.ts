@@ -133,7 +133,7 @@ export function linkScenario(): Scenario {
     id: `report${index}`,
     name: `Report ${index}`,
     enabled: true,
-    schedule: { kind: 'every', periodS: 900 * (index + 1) },
+    schedule: { kind: 'every', periodS: 60 * (index + 1) },
     steps: Array.from({ length: 5 }, (_, step) => ({
       id: `send${step}`,
       name: `Send ${step}`,
