@@ -18,7 +18,7 @@
  *
  *   describeTruth('zephyr.json', { phy: (row) => … });
  */
-import { readFileSync } from 'node:fs';
+import { readFileSync, readdirSync } from 'node:fs';
 import { describe, expect, test } from 'vitest';
 
 export type TruthStanding = 'published' | 'computed' | 'from memory' | 'common practice, no source';
@@ -99,6 +99,16 @@ export function readTruth(fileName: string): TruthFile {
   const file: unknown = JSON.parse(readFileSync(new URL(`../truth/${fileName}`, import.meta.url), 'utf8'));
   if (!isTruthFile(file)) throw new Error(`${fileName} is no truth file.`);
   return file;
+}
+
+/** Expected value of a row, in its own unit, whichever file holds it. */
+export function truthValue(id: string): number {
+  for (const name of readdirSync(new URL('../truth/', import.meta.url))) {
+    if (!name.endsWith('.json')) continue;
+    const row = readTruth(name).rows.find((one) => one.id === id);
+    if (row) return row.expected.value;
+  }
+  throw new Error(`No truth file has the row "${id}".`);
 }
 
 function isTruthFile(file: unknown): file is TruthFile {
