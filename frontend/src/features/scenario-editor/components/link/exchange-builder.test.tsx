@@ -4,7 +4,6 @@ import { stepDuration } from '#common/engine/index.ts';
 import type { LinkSettings, Scenario } from '#common/engine/scenario/scenario.types.ts';
 import { ToastProvider } from '#frontend/components/toast.tsx';
 import { EditorProvider } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
-import { WhatIfProvider } from '#frontend/features/scenario-editor/hooks/what-if-slot.tsx';
 import { createEditorStore, type EditorStore } from '#frontend/features/scenario-editor/model/editor-store.ts';
 import { editorScenario } from '#test/support/editor-scenario.ts';
 import { resetUi } from '#test/support/ui.tsx';
@@ -31,9 +30,7 @@ function renderStep(document: Scenario): void {
   render(
     <ToastProvider>
       <EditorProvider store={store} isReadOnly={false}>
-        <WhatIfProvider render={({ stepId }) => <p>What if of {stepId}</p>}>
-          <NodeEditor problems={[]} />
-        </WhatIfProvider>
+        <NodeEditor problems={[]} />
       </EditorProvider>
     </ToastProvider>,
   );
@@ -64,7 +61,6 @@ describe('a step derived from the link', () => {
   test('shows the frame octet by octet and the phases of the exchange', () => {
     expect(detail().getByText(': 24 octets, places 16 to 39')).toBeDefined();
     expect(within(phases()).getByText('backoff')).toBeDefined();
-    expect(detail().getByText('What if of wait')).toBeDefined();
   });
 
   test('moves frame, phases and the duration in the table with one figure', () => {

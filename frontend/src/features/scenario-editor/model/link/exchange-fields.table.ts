@@ -44,7 +44,7 @@ const ACK: FieldDescriptor = {
   type: 'figure',
   key: 'ackPsduOctets',
   label: 'Acknowledgement',
-  hint: 'PSDU; empty: the shortest',
+  hint: 'PSDU; empty: the usual one',
   options: OCTETS,
   isOptional: true,
 };
@@ -134,7 +134,11 @@ export const EXCHANGES: Readonly<Record<PatternId, ExchangeKind>> = {
         options: PROBABILITY,
       },
       figure('responsePsduOctets', 'Its frame (PSDU)', { options: OCTETS, isOptional: true, hint: 'FCS included' }),
-      figure('responseDelayS', 'It comes after', { options: STEP_TIME, isOptional: true, hint: 'empty: at once' }),
+      figure('responseDelayS', 'It comes after', {
+        options: STEP_TIME,
+        isOptional: true,
+        hint: 'empty: the parent’s channel access',
+      }),
       figure('waitS', 'Longest wait for it', {
         options: STEP_TIME,
         isOptional: true,

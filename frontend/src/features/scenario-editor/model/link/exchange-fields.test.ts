@@ -62,7 +62,7 @@ describe('LINK_SECTIONS', () => {
   test('tell what is assumed where nothing is set, and what is set where it is', () => {
     const wordsOf = (link: LinkSettings): string =>
       LINK_SECTIONS.flatMap(({ summary }) => summary(link).filter((words) => words !== undefined)).join(' ');
-    expect(wordsOf(LINK)).toContain('busy 10 % assumed');
+    expect(wordsOf(LINK)).toContain('busy 10\u00a0% assumed');
     expect(wordsOf({ ...LINK, busyProbability: { typical: 0.5 } })).toContain('busy 50 %');
   });
 

@@ -1,3 +1,10 @@
+import { backoffSettings } from '#common/engine/link/csma-ca.ts';
+import {
+  assumedTolerancePpm,
+  linkDefaults,
+  standardFrame,
+  type LinkDefaultId,
+} from '#common/engine/link/link-defaults.table.ts';
 import type { LinkSettings } from '#common/engine/scenario/scenario.types.ts';
 import {
   CRYSTAL_CAPACITANCE,
@@ -10,6 +17,7 @@ import {
   STEP_TIME,
   TOLERANCE,
 } from '#frontend/features/scenario-editor/model/figure-options.ts';
+import { formatShare } from '#common/units/format-quantity.ts';
 import { describedText, type FieldDescriptor } from './field-descriptor.ts';
 import { phyWords } from './phy-choice.ts';
 import { valueAt } from './link-values.ts';
@@ -24,6 +32,11 @@ export interface LinkSection {
   /** Settings that the line always tells, in a few words each; undefined where there is nothing to tell. */
   summary: (link: LinkSettings) => (string | undefined)[];
 }
+
+const percentOf = (id: LinkDefaultId): string => formatShare(linkDefaults[id].value);
+const assumed = (id: LinkDefaultId): string => `assumed ${percentOf(id)}`;
+/** What the standard gives where nothing is typed. */
+const CSMA = backoffSettings({});
 
 const FLAG = [
   { value: true, label: 'yes' },
@@ -118,7 +131,7 @@ const CHANNEL: readonly FieldDescriptor[] = [
     type: 'quantity',
     key: 'busyProbability',
     label: 'Channel busy',
-    hint: 'empty: assumed 10 %',
+    hint: `empty: ${assumed('busyProbability')}`,
     options: PROBABILITY,
     isOptional: true,
   },
@@ -126,7 +139,7 @@ const CHANNEL: readonly FieldDescriptor[] = [
     type: 'quantity',
     key: 'frameErrorRate',
     label: 'Frame lost',
-    hint: 'empty: from the level, else assumed 5 %',
+    hint: `empty: from the level, else ${assumed('frameErrorRate')}`,
     options: PROBABILITY,
     isOptional: true,
   },
@@ -134,7 +147,7 @@ const CHANNEL: readonly FieldDescriptor[] = [
     type: 'quantity',
     key: 'ackErrorRate',
     label: 'Acknowledgement lost',
-    hint: 'empty: from the level, else assumed 1 %',
+    hint: `empty: from the level, else ${assumed('ackErrorRate')}`,
     options: PROBABILITY,
     isOptional: true,
   },
@@ -149,7 +162,7 @@ const CHANNEL: readonly FieldDescriptor[] = [
   {
     type: 'figure',
     key: 'receivedLevelStepDb',
-    label: 'Receiver tells the level in steps of',
+    label: 'Level told in steps of',
     hint: 'dB; empty: exactly',
     options: LEVEL_STEP,
     isOptional: true,
@@ -173,13 +186,27 @@ const CHANNEL: readonly FieldDescriptor[] = [
 ];
 
 const ACCESS: readonly FieldDescriptor[] = [
-  { type: 'figure', key: 'macMinBE', label: 'macMinBE', hint: 'empty: 3', options: countOf(0, 8), isOptional: true },
-  { type: 'figure', key: 'macMaxBE', label: 'macMaxBE', hint: 'empty: 5', options: countOf(3, 8), isOptional: true },
+  {
+    type: 'figure',
+    key: 'macMinBE',
+    label: 'macMinBE',
+    hint: `empty: ${CSMA.macMinBE}`,
+    options: countOf(0, 8),
+    isOptional: true,
+  },
+  {
+    type: 'figure',
+    key: 'macMaxBE',
+    label: 'macMaxBE',
+    hint: `empty: ${CSMA.macMaxBE}`,
+    options: countOf(3, 8),
+    isOptional: true,
+  },
   {
     type: 'figure',
     key: 'macMaxCSMABackoffs',
     label: 'macMaxCSMABackoffs',
-    hint: 'empty: 4',
+    hint: `empty: ${CSMA.macMaxCSMABackoffs}`,
     options: countOf(0, 5),
     isOptional: true,
   },
@@ -250,7 +277,7 @@ const CRYSTAL: readonly FieldDescriptor[] = [
     type: 'quantity',
     key: 'tolerancePpm',
     label: 'Own clock in all, ±',
-    hint: 'empty: from the crystal',
+    hint: 'empty: from the crystal, else assumed',
     options: TOLERANCE,
     isOptional: true,
   },
@@ -258,7 +285,7 @@ const CRYSTAL: readonly FieldDescriptor[] = [
     type: 'quantity',
     key: 'peerTolerancePpm',
     label: 'The other’s clock, ±',
-    hint: 'empty: like the own',
+    hint: `empty: assumed ${assumedTolerancePpm} ppm`,
     options: TOLERANCE,
     isOptional: true,
   },
@@ -311,7 +338,7 @@ const withWord = (text: string | undefined, before: string, otherwise?: string):
 function lossWords(link: LinkSettings): string | undefined {
   if (link.frameErrorRate) return withWord(told(link, CHANNEL, 'frameErrorRate'), 'lost');
   const level = told(link, CHANNEL, 'receivedLevelDbm');
-  return withWord(level, 'lost from', 'lost 5 % assumed');
+  return withWord(level, 'lost from', `lost ${percentOf('frameErrorRate')} assumed`);
 }
 
 /** The link settings in sections, the most telling first. */
@@ -346,9 +373,9 @@ export const LINK_SECTIONS: readonly LinkSection[] = [
     title: 'Frame format',
     fields: FRAME,
     summary: (link) => [
-      told(link, FRAME, 'frame.frameVersion') ?? '2006',
-      `to ${link.frame?.destination ?? 'short'}`,
-      `from ${link.frame?.source ?? 'short'}`,
+      told(link, FRAME, 'frame.frameVersion') ?? standardFrame.frameVersion,
+      `to ${link.frame?.destination ?? standardFrame.destination}`,
+      `from ${link.frame?.source ?? standardFrame.source}`,
       `security ${link.frame?.securityLevel ?? 0}`,
       withWord(told(link, FRAME, 'frame.informationElementOctets'), 'elements'),
     ],
@@ -358,7 +385,7 @@ export const LINK_SECTIONS: readonly LinkSection[] = [
     title: 'Channel',
     fields: CHANNEL,
     summary: (link) => [
-      withWord(told(link, CHANNEL, 'busyProbability'), 'busy', 'busy 10 % assumed'),
+      withWord(told(link, CHANNEL, 'busyProbability'), 'busy', `busy ${percentOf('busyProbability')} assumed`),
       lossWords(link),
       withWord(told(link, CHANNEL, 'ackErrorRate'), 'acknowledgement lost'),
     ],
@@ -367,9 +394,9 @@ export const LINK_SECTIONS: readonly LinkSection[] = [
     id: 'access',
     title: 'Channel access and retries',
     fields: ACCESS,
-    summary: ({ macMinBE = 3, macMaxBE = 5, macMaxCSMABackoffs = 4, macMaxFrameRetries = 3, ...link }) => [
-      `backoff exponent ${macMinBE} to ${macMaxBE}`,
-      `${macMaxCSMABackoffs} more looks`,
+    summary: ({ macMaxFrameRetries = 3, ...link }) => [
+      `backoff exponent ${link.macMinBE ?? CSMA.macMinBE} to ${link.macMaxBE ?? CSMA.macMaxBE}`,
+      `${link.macMaxCSMABackoffs ?? CSMA.macMaxCSMABackoffs} more looks`,
       `${macMaxFrameRetries} retries`,
       link.backoffIn === 'sleep' ? 'waits asleep' : undefined,
     ],
