@@ -2,10 +2,10 @@ import { useDeferredValue, useMemo, useState } from 'react';
 import type { ExchangePlan } from '#common/engine/link/exchange-plan.types.ts';
 import { CautionProvider } from '#frontend/features/scenario-editor/hooks/caution-context.tsx';
 import { useDocument, useFieldProblem } from '#frontend/features/scenario-editor/hooks/editor-context.tsx';
-import { WhatIfSlot } from '#frontend/features/scenario-editor/hooks/what-if-slot.tsx';
 import { EXCHANGES } from '#frontend/features/scenario-editor/model/link/exchange-fields.table.ts';
 import { planOf, type PlanResult } from '#frontend/features/scenario-editor/model/link/plan-of.ts';
 import { withLink } from '#frontend/features/scenario-editor/model/operations/exchange-operations.ts';
+import { WhatIf } from '../what-if/what-if.tsx';
 import { ExchangeFields } from './exchange-fields.tsx';
 import { ExchangePicture } from './exchange-picture.tsx';
 import { FrameOctets } from './frame-octets.tsx';
@@ -40,7 +40,7 @@ export function ExchangeBuilder({ routineId, stepId, ...props }: Props) {
         <LoadingFields {...props} />
         <Outcome field={field} result={result} />
         {shown && <Pictures plan={shown} isOld={result.kind === 'problem'} />}
-        <WhatIfSlot routineId={routineId} stepId={stepId} />
+        <WhatIf routineId={routineId} stepId={stepId} />
       </div>
     </CautionProvider>
   );
