@@ -200,6 +200,16 @@ export const dutyCycleBandSchema = z.enum([
 
 export const linkSettingsSchema = z.strictObject({
   phy: z.union([phyIdSchema, customPhySchema]).optional(),
+  phyConstants: z
+    .strictObject({
+      shrOctets: octets.optional(),
+      phrOctets: octets.optional(),
+      turnaroundS: durationS.optional(),
+      ccaS: durationS.optional(),
+      unitBackoffS: durationS.optional(),
+      ackWaitS: durationS.optional(),
+    })
+    .optional(),
   preambleOctets: octets.optional(),
   forwardErrorCorrection: z.boolean().optional(),
   frame: z

@@ -22,11 +22,14 @@ const UNITS = {
 export function phyConstant(phy: Phy, name: keyof typeof UNITS): number {
   const value = phy[name];
   if (value !== null) return value;
-  throw new InconsistentInputError(`No source gives ${name} of the PHY "${phy.id}"; take a PHY that gives it.`, {
-    code: 'constant-unknown',
-    field: name,
-    value: null,
-    unit: UNITS[name],
-    expected: `a PHY that gives ${name}`,
-  });
+  throw new InconsistentInputError(
+    `No source gives ${name} of the PHY "${phy.id}"; type it, or take a PHY that gives it.`,
+    {
+      code: 'constant-unknown',
+      field: name,
+      value: null,
+      unit: UNITS[name],
+      expected: `${name} typed, or a PHY that gives it`,
+    },
+  );
 }

@@ -1,6 +1,6 @@
 import { InconsistentInputError } from '#common/errors.ts';
 import { formatShare } from '#common/units/format-quantity.ts';
-import type { ExchangeDuration, LinkSettings, Quantity } from '../scenario/scenario.types.ts';
+import type { ExchangeDuration, LinkSettings, PhyConstants, Quantity } from '../scenario/scenario.types.ts';
 import { requireNumber } from './checks.ts';
 import type { ExchangeFigure, PlanCaution } from './exchange-plan.types.ts';
 import { linkDefaults } from './link-defaults.table.ts';
@@ -29,13 +29,24 @@ export type PlanOf<P extends ExchangeDuration['pattern']> = PlanContext<Extract<
  * @example planPhy({ phy: 'oqpsk-2450' }).bitRateBps // 250000
  */
 export function planPhy(link: LinkSettings): Phy {
-  if (link.phy !== undefined) return phyOf(link.phy);
+  if (link.phy !== undefined) return withConstants(phyOf(link.phy), link.phyConstants);
   throw new InconsistentInputError('The airtime of a frame needs a PHY; choose one for the step or the node.', {
     code: 'phy-missing',
     field: 'link.phy',
     expected: 'a PHY preset or a PHY of your own',
   });
 }
+
+/** A PHY with the constants that the scenario gives in place of its own. */
+function withConstants(phy: Phy, given: PhyConstants | undefined): Phy {
+  if (given === undefined) return phy;
+  const sources = { ...phy.sources };
+  for (const name of Object.keys(given)) if (isConstant(name)) sources[name] = 'given in the scenario';
+  return { ...phy, ...given, sources };
+}
+
+const isConstant = (name: string): name is keyof PhyConstants =>
+  ['shrOctets', 'phrOctets', 'turnaroundS', 'ccaS', 'unitBackoffS', 'ackWaitS'].includes(name);
 
 const assumedWords = ({ value, words, source }: LinkDefault): string =>
   `Nothing says how likely it is ${words}: ${formatShare(value)} is assumed (${source}).`;

@@ -113,7 +113,20 @@ describe('stepDuration: exchange', () => {
     const run = () => stepDuration(exchange({ pattern: 'frame', psduOctets: 5 }), { phy: 'msk-2450' }, path);
     expect(errorOf(InconsistentInputError, run)).toMatchObject({
       code: 'constant-unknown',
-      field: 'node.link.phy',
+      field: 'node.link.phyConstants.shrOctets',
     });
+  });
+
+  test('takes constants of the PHY from the link where the preset has none', () => {
+    const link: LinkSettings = { phy: 'msk-2450', phyConstants: { shrOctets: 5, phrOctets: 1 } };
+    expect(stepDuration(exchange({ pattern: 'frame', psduOctets: 127 }), link, path).meanS).toBeCloseTo(0.004256, 12);
+  });
+
+  test('sends an acknowledged frame on SUN FSK once the acknowledgement wait is typed', () => {
+    const acknowledged = exchange({ pattern: 'acknowledged', payloadOctets: 24 });
+    const without = () => stepDuration(acknowledged, { phy: 'sun-fsk-50' }, path);
+    expect(errorOf(InconsistentInputError, without).field).toBe('node.link.phyConstants.ackWaitS');
+    const link: LinkSettings = { phy: 'sun-fsk-50', phyConstants: { ackWaitS: 0.01 } };
+    expect(stepDuration(acknowledged, link, path).meanS).toBeGreaterThan(0.01);
   });
 });

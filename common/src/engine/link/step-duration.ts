@@ -31,8 +31,9 @@ const LINK_FIELDS = new Set(
     .join(',')
     .split(','),
 );
-/** Constants that a PHY leaves open are given by another PHY. */
-const PHY_FIELDS = new Set('shrOctets,phrOctets,turnaroundS,ccaS,unitBackoffS,ackWaitS,sifsS,lifsS'.split(','));
+/** Constants that a PHY leaves open are given beside it, the spaces by another PHY. */
+const CONSTANT_FIELDS = new Set('shrOctets,phrOctets,turnaroundS,ccaS,unitBackoffS,ackWaitS'.split(','));
+const PHY_FIELDS = new Set(['sifsS', 'lifsS']);
 
 /**
  * Mean duration of a step: typed, of a serial transfer, or of an exchange's plan.
@@ -146,6 +147,7 @@ function fieldPath(place: Place, field: string): string {
   if (field === '') return place.path;
   if (FRAME_FIELDS.has(field)) return linkPath(place, `frame.${field}`);
   if (LINK_FIELDS.has(field)) return linkPath(place, field);
+  if (CONSTANT_FIELDS.has(field)) return linkPath(place, `phyConstants.${field}`);
   if (PHY_FIELDS.has(field)) return linkPath(place, 'phy');
   if (field.startsWith('crystal.')) return linkPath(place, field);
   if (field.startsWith('link.')) return linkPath(place, field.slice('link.'.length));

@@ -125,6 +125,17 @@ export interface CustomPhy {
   maxPsduOctets?: number;
 }
 
+/** Constants of the PHY in place of those of the preset, or where it has none; turnaround and waits in s. */
+export interface PhyConstants {
+  shrOctets?: number;
+  phrOctets?: number;
+  turnaroundS?: number;
+  ccaS?: number;
+  unitBackoffS?: number;
+  /** Wait for an acknowledgement from the last bit of the frame, s. */
+  ackWaitS?: number;
+}
+
 export type AddressMode = 'none' | 'short' | 'extended';
 
 export interface FrameFormat {
@@ -187,6 +198,7 @@ export interface FrameLoading {
 /** Radio link settings; those of the node are the defaults of its exchange steps. */
 export interface LinkSettings {
   phy?: PhyId | CustomPhy;
+  phyConstants?: PhyConstants;
   preambleOctets?: number;
   forwardErrorCorrection?: boolean;
   frame?: FrameFormat;

@@ -326,6 +326,27 @@ const REGION: readonly FieldDescriptor[] = [
   { type: 'choice', key: 'dutyCycleBand', label: 'Sub-band', absent: 'no limit counted', choices: BANDS },
 ];
 
+const OF_THE_PHY = 'empty: that of the PHY';
+
+/** Constants of the PHY, for radios that keep others and for PHYs of which no source gives them. */
+const CONSTANTS: readonly FieldDescriptor[] = (
+  [
+    ['shrOctets', 'SHR', OCTETS],
+    ['phrOctets', 'PHR', OCTETS],
+    ['turnaroundS', 'Turnaround', STEP_TIME],
+    ['ccaS', 'Assessment takes', STEP_TIME],
+    ['unitBackoffS', 'Backoff unit', STEP_TIME],
+    ['ackWaitS', 'Acknowledgement wait', STEP_TIME],
+  ] as const
+).map(([key, label, options]) => ({
+  type: 'figure' as const,
+  key: `phyConstants.${key}`,
+  label,
+  hint: OF_THE_PHY,
+  options,
+  isOptional: true,
+}));
+
 /** The text of a setting by its key; undefined where it is not set. */
 function told(link: LinkSettings, fields: readonly FieldDescriptor[], key: string): string | undefined {
   const descriptor = fields.find((field) => field.key === key);
@@ -362,10 +383,12 @@ export const LINK_SECTIONS: readonly LinkSection[] = [
         absent: 'no',
         choices: FLAG,
       },
+      ...CONSTANTS,
     ],
-    summary: ({ phy, forwardErrorCorrection }) => [
+    summary: ({ phy, forwardErrorCorrection, phyConstants }) => [
       phy === undefined ? 'none chosen' : phyWords(phy),
       forwardErrorCorrection === true ? 'error correction' : undefined,
+      phyConstants && 'with constants of its own',
     ],
   },
   {
