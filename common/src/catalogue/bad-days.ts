@@ -190,7 +190,7 @@ const STEPS: Readonly<Record<BadDayId, (tools: Tools, channels: number) => Step[
       4,
     ),
     scan(tools, 'first-scan', 'Scan in vain', channels),
-    tools.pause('back-off', 'Back off before the next scan', '20 … 30 … 60 s'),
+    tools.pause('back-off', 'Back off', '20 … 30 … 60 s'),
     scan(tools, 'second-scan', 'Scan again', channels),
     ...join(tools),
   ],

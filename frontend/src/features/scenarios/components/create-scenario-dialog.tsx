@@ -41,7 +41,7 @@ export function CreateScenarioDialog({ projectId, onClose, onCreated }: CreateSc
     }
   });
   return (
-    <Dialog title="New scenario" isOpen onClose={onClose}>
+    <Dialog title="New scenario" isOpen isWide onClose={onClose}>
       <form noValidate onSubmit={submit}>
         <FormError>{problem}</FormError>
         <TextField
@@ -52,14 +52,16 @@ export function CreateScenarioDialog({ projectId, onClose, onCreated }: CreateSc
         />
         <fieldset className="mt-3">
           <legend className="text-small text-muted">Begin with</legend>
-          {TEMPLATE_GROUPS.map((group) => (
-            <TemplateGroup
-              key={group.id}
-              name={group.name}
-              choices={choices.filter((choice) => choice.group === group.id)}
-              field={register('startId')}
-            />
-          ))}
+          <div className="grid gap-x-10 sm:grid-cols-2">
+            {TEMPLATE_GROUPS.map((group) => (
+              <TemplateGroup
+                key={group.id}
+                name={group.name}
+                choices={choices.filter((choice) => choice.group === group.id)}
+                field={register('startId')}
+              />
+            ))}
+          </div>
         </fieldset>
         <DialogActions>
           <Button onClick={onClose}>Cancel</Button>

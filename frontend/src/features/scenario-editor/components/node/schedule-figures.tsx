@@ -26,6 +26,9 @@ const PERIOD_ROW: Row = {
   write: (schedule, periodS) => ('periodS' in schedule && periodS !== undefined ? { ...schedule, periodS } : schedule),
 };
 
+/** What a year of 365.25 days makes of a round number is not round; seven digits are more than anyone types. */
+const legible = (rate: number): number => Number(rate.toPrecision(7));
+
 const ROWS: Record<Schedule['kind'], readonly Row[]> = {
   every: [PERIOD_ROW],
   window: [
@@ -52,7 +55,7 @@ const ROWS: Record<Schedule['kind'], readonly Row[]> = {
       key: 'meanPerDay',
       label: 'On average',
       options: PER_DAY,
-      read: (schedule) => (schedule.kind === 'random' ? schedule.meanPerDay : undefined),
+      read: (schedule) => (schedule.kind === 'random' ? legible(schedule.meanPerDay) : undefined),
       write: (schedule, meanPerDay) =>
         schedule.kind === 'random' && meanPerDay !== undefined ? { ...schedule, meanPerDay } : schedule,
     },
@@ -60,7 +63,7 @@ const ROWS: Record<Schedule['kind'], readonly Row[]> = {
       key: 'timesAYear',
       label: 'which is, a year',
       options: TIMES_A_YEAR,
-      read: (schedule) => (schedule.kind === 'random' ? perYearOf(schedule.meanPerDay) : undefined),
+      read: (schedule) => (schedule.kind === 'random' ? legible(perYearOf(schedule.meanPerDay)) : undefined),
       write: (schedule, timesAYear) =>
         schedule.kind === 'random' && timesAYear !== undefined
           ? { ...schedule, meanPerDay: perDayOf(timesAYear) }

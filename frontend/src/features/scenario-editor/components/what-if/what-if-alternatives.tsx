@@ -72,7 +72,7 @@ function Table({ axis, outcomes, isOld }: TableProps) {
         <table className="w-full table-fixed border-collapse text-left tabular-nums max-sm:min-w-[34rem]">
           <thead>
             <tr className="border-b border-line align-bottom">
-              <th scope="col" className="w-28 py-1.5 pr-3 text-small font-normal text-muted">
+              <th scope="col" className="sticky left-0 w-28 bg-paper py-1.5 pr-3 text-small font-normal text-muted">
                 {title}
               </th>
               {alternatives.map(({ label, isCurrent, value }) => (
@@ -103,7 +103,7 @@ function Table({ axis, outcomes, isOld }: TableProps) {
 function MetricRow({ row, current }: { row: Row; current: number }) {
   return (
     <tr className="border-b border-hair align-top">
-      <th scope="row" className="py-1.5 pr-3 text-small font-normal text-muted">
+      <th scope="row" className="sticky left-0 bg-paper py-1.5 pr-3 text-small font-normal text-muted">
         {row.title}
       </th>
       {row.cells.map(({ text, change }, index) => (

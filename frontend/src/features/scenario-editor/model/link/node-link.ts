@@ -15,12 +15,18 @@ export function withNodeLink(document: Scenario, apply: (link: LinkSettings) => 
   });
 }
 
-const TOLD: readonly LinkSectionId[] = ['phy', 'channel', 'access'];
+/** How much of each section the line has room for: its first so many words, and the last of the standard's counts. */
+const TOLD: readonly { id: LinkSectionId; from: number; to: number }[] = [
+  { id: 'phy', from: 0, to: 1 },
+  { id: 'channel', from: 0, to: 2 },
+  { id: 'access', from: 2, to: 3 },
+];
 
-/** The settings in one line, the most telling ones. */
+/** The settings in one line: PHY, busy channel, loss, retries. */
 export function linkWords(link: LinkSettings): string {
-  return LINK_SECTIONS.filter(({ id }) => TOLD.includes(id))
-    .flatMap(({ summary }) => summary(link))
+  return TOLD.flatMap(({ id, from, to }) =>
+    LINK_SECTIONS.filter((section) => section.id === id).flatMap(({ summary }) => summary(link).slice(from, to)),
+  )
     .filter((words) => words !== undefined)
     .join(' · ');
 }

@@ -3,6 +3,7 @@ import type { Scenario } from '#common/engine/scenario/scenario.types.ts';
 import { formatNumber, formatQuantity, formatShare } from '#common/units/format-quantity.ts';
 import { onExchange, withExchangeValue } from '../operations/exchange-operations.ts';
 import { updateStep } from '../operations/routine-operations.ts';
+import { figureWords } from '../link/figure-words.ts';
 import { planOf } from '../link/plan-of.ts';
 import { sizeOf, withProbability, type WhatIfTarget } from './what-if-axes.ts';
 import { figuresOf, type WhatIfFigures } from './what-if-outcome.ts';
@@ -84,7 +85,7 @@ function payloadChart(plan: ExchangePlan, current: number, documentAt: ChartPlan
     id: 'payload',
     title: `Charge per ${isDelivered ? 'delivered octet' : 'octet'} against payload`,
     xTitle: 'Payload, octets',
-    yTitle: `Charge per ${isDelivered ? 'delivered octet' : 'octet'}, µC`,
+    yTitle: `µC per ${isDelivered ? 'delivered octet' : 'octet'}`,
     xs: spread(1, largest, current),
     current,
     documentAt,
@@ -107,7 +108,7 @@ function busyChart(current: number, documentAt: ChartPlan['documentAt']): ChartP
     id: 'busy',
     title: 'Charge per exchange against busy channel',
     xTitle: 'Probability that the channel is busy, %',
-    yTitle: 'Charge per exchange, µC',
+    yTitle: 'µC per exchange',
     xs: merged(even, current),
     current,
     documentAt,
@@ -145,7 +146,7 @@ type Found = ChartPoint | null;
 
 /** How likely the payload arrives at a point: "98.21 % delivered"; null where nobody tells. */
 export function deliveredWords({ delivered }: ChartPoint): string | null {
-  return delivered === null ? null : `${formatShare(delivered, { significantDigits: 4 })} delivered`;
+  return delivered === null ? null : `${figureWords({ value: delivered, unit: 'probability' })} delivered`;
 }
 
 /** Charts from the points of all of them, in the order of their plans. */

@@ -1,6 +1,7 @@
 import { formatDuration } from '#common/units/format-duration.ts';
 import { formatQuantity, formatShare } from '#common/units/format-quantity.ts';
 import { DAY_S, YEAR_S } from '#common/units/si.ts';
+import { figureWords } from '../link/figure-words.ts';
 import type { WhatIfFigures, WhatIfLife, WhatIfOutcome } from './what-if-outcome.ts';
 
 /** A figure of an alternative, and how far it is from the present one; null: nothing to tell. */
@@ -32,7 +33,7 @@ interface Metric {
 
 const duration = (timeS: number): string => formatDuration(timeS, { significantDigits: 3 });
 const charge = (chargeC: number): string => formatQuantity(chargeC, 'charge', { significantDigits: 3 });
-const share = (value: number): string => formatShare(value, { significantDigits: 4 });
+const share = (value: number): string => figureWords({ value, unit: 'probability' });
 const NEXT_TO_NOTHING = 1e-6;
 
 const METRICS: readonly Metric[] = [

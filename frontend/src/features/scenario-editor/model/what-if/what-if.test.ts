@@ -198,8 +198,8 @@ describe('chartPlans', () => {
 
   it('are two for an acknowledged report, with units on the axes', () => {
     expect(plans.map(({ xTitle, yTitle }) => [xTitle, yTitle])).toEqual([
-      ['Payload, octets', 'Charge per delivered octet, µC'],
-      ['Probability that the channel is busy, %', 'Charge per exchange, µC'],
+      ['Payload, octets', 'µC per delivered octet'],
+      ['Probability that the channel is busy, %', 'µC per exchange'],
     ]);
   });
 
@@ -231,6 +231,6 @@ describe('chartPlans', () => {
 
   it('speak of octets only where nobody tells whether they arrive', () => {
     const [plan] = chartPlans(scenarioTemplate('advertiser').document, { routineId: 'advertise', stepId: 'send' });
-    expect(plan?.yTitle).toBe('Charge per octet, µC');
+    expect(plan?.yTitle).toBe('µC per octet');
   });
 });
