@@ -12,6 +12,14 @@ export interface EngineErrorDetails {
   expected?: string;
   /** Further paths of the same problem, for example the other part of an unmet need. */
   relatedFields?: string[];
+  /** Of a part that cannot get from one state to another: which. */
+  move?: StateMove;
+}
+
+/** A change of state by their ids. */
+export interface StateMove {
+  fromStateId: string;
+  toStateId: string;
 }
 
 /** Base of everything the engine throws. It knows nothing of HTTP. */
@@ -22,6 +30,7 @@ export class EngineError extends Error {
   readonly unit: string | undefined;
   readonly expected: string | undefined;
   readonly relatedFields: readonly string[];
+  readonly move: StateMove | undefined;
 
   constructor(message: string, details: EngineErrorDetails, options?: ErrorOptions) {
     super(message, options);
@@ -32,6 +41,7 @@ export class EngineError extends Error {
     this.unit = details.unit;
     this.expected = details.expected;
     this.relatedFields = details.relatedFields ?? [];
+    this.move = details.move;
   }
 }
 

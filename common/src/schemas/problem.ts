@@ -1,10 +1,12 @@
 import { z } from 'zod';
-import { EngineErrors, type EngineError } from '#common/errors.ts';
+import { EngineErrors, type EngineError, type StateMove } from '#common/errors.ts';
 
 /** One problem of an input: where, as `node.parts[0].name`, and what is wrong in words. */
 export interface InputProblem {
   path: string;
   message: string;
+  /** Of a part that cannot get from one state to another: which. */
+  move?: StateMove;
 }
 
 /** Body of every error answer, `application/problem+json` (RFC 9457). */
@@ -15,7 +17,13 @@ export const problemSchema = z.strictObject({
   code: z.string(),
   detail: z.string().optional(),
   requestId: z.string(),
-  errors: z.array(z.strictObject({ path: z.string(), message: z.string() })),
+  errors: z.array(
+    z.strictObject({
+      path: z.string(),
+      message: z.string(),
+      move: z.strictObject({ fromStateId: z.string(), toStateId: z.string() }).optional(),
+    }),
+  ),
   /** With code `conflict`: what is stored now, so that nothing is lost. */
   current: z.unknown().optional(),
   /** With code `conflict`: what was sent. */
@@ -46,7 +54,11 @@ export function problemsOfZod(error: z.ZodError): InputProblem[] {
 /** Every problem of an engine error, prefixed where the engine's input is part of a larger body. */
 export function problemsOfEngine(error: EngineError, prefix = ''): InputProblem[] {
   const errors = error instanceof EngineErrors ? error.errors : [error];
-  return errors.map(({ field, message }) => ({ path: [prefix, field].filter(Boolean).join('.'), message }));
+  return errors.map(({ field, message, move }) => ({
+    path: [prefix, field].filter(Boolean).join('.'),
+    message,
+    ...(move === undefined ? {} : { move }),
+  }));
 }
 
 function problemsOfIssue(issue: z.core.$ZodIssue, parent: readonly PropertyKey[]): InputProblem[] {

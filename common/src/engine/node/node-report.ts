@@ -1,5 +1,5 @@
 import { EngineErrors, InconsistentInputError, OutOfRangeError } from '#common/errors.ts';
-import type { EngineError } from '#common/errors.ts';
+import type { EngineError, StateMove } from '#common/errors.ts';
 import type { NodeRemark } from './node-program.types.ts';
 
 /** Collects the errors and remarks of one pass over a node. */
@@ -18,7 +18,7 @@ export class NodeReport {
     code: string,
     field: string,
     message: string,
-    details: { value?: unknown; expected?: string } = {},
+    details: { value?: unknown; expected?: string; move?: StateMove } = {},
   ): void {
     this.errors.push(new InconsistentInputError(message, { code, field, ...details }));
   }

@@ -30,7 +30,7 @@ const PATH = /^node\.routines\[(\d+)\]\.steps\[(\d+)\]\.states\.([\w-]+)$/;
 /** What the engine's complaints about a step's states amount to: which moves lack a way, and what would give one. */
 export function missingMoves(scenario: Scenario, problems: readonly InputProblem[]): MissingMove[] {
   const found = new Map<string, MissingMove>();
-  for (const { path } of problems) {
+  for (const { path, move } of problems) {
     const [, routineIndex, stepIndex, partId] = PATH.exec(path) ?? [];
     const routine = scenario.node.routines[Number(routineIndex)];
     const step = routine?.steps[Number(stepIndex)];
@@ -38,29 +38,16 @@ export function missingMoves(scenario: Scenario, problems: readonly InputProblem
     const part = scenario.node.parts[index];
     // The reference voltage does not matter to the way.
     const model = part && partModel(part, index, 3);
-    if (!routine || !step || !model) continue;
-    for (const move of movesAt(routine, Number(stepIndex), model)) {
-      const key = `${step.id} ${model.part.id} ${move.from.id} ${move.to.id}`;
-      if (!found.has(key)) found.set(key, { key, routine, step, part: model.part, ...move });
+    if (!move || !routine || !step || !model) continue;
+    for (const missing of missingMove(model, move.fromStateId, move.toStateId)) {
+      const key = `${step.id} ${model.part.id} ${missing.from.id} ${missing.to.id}`;
+      if (!found.has(key)) found.set(key, { key, routine, step, part: model.part, ...missing });
     }
   }
   return [...found.values()];
 }
 
 type Move = Pick<MissingMove, 'from' | 'to' | 'reachable' | 'links'>;
-
-/** The moves of a part around a step: into it, and after the last step back to rest or to the first step. */
-function movesAt(routine: Routine, stepIndex: number, model: PartModel): Move[] {
-  const { steps, schedule } = routine;
-  const { id, restStateId } = model.part;
-  const stateAt = (index: number): string => steps[index]?.states[id] ?? restStateId;
-  const isLast = stepIndex === steps.length - 1;
-  const before =
-    stepIndex > 0 ? stateAt(stepIndex - 1) : schedule.kind === 'always' ? stateAt(steps.length - 1) : restStateId;
-  const pairs: [string, string][] = [[before, stateAt(stepIndex)]];
-  if (isLast && schedule.kind !== 'always') pairs.push([stateAt(stepIndex), restStateId]);
-  return pairs.flatMap(([from, to]) => missingMove(model, from, to));
-}
 
 function missingMove(model: PartModel, fromId: string, toId: string): Move[] {
   const from = model.stateById.get(fromId);
