@@ -53,7 +53,7 @@ describe('bad days', () => {
     open('acknowledged-report');
     openDays();
     fireEvent.click(screen.getByLabelText('Add Lost parent'));
-    type('which is, a year', '6');
+    type('Times a year', '6');
     expect(routines().at(-1)?.schedule).toMatchObject({ meanPerDay: 6 / 365.25 });
   });
 

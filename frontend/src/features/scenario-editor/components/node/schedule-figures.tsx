@@ -61,7 +61,7 @@ const ROWS: Record<Schedule['kind'], readonly Row[]> = {
     },
     {
       key: 'timesAYear',
-      label: 'which is, a year',
+      label: 'Times a year',
       options: TIMES_A_YEAR,
       read: (schedule) => (schedule.kind === 'random' ? legible(perYearOf(schedule.meanPerDay)) : undefined),
       write: (schedule, timesAYear) =>

@@ -44,7 +44,7 @@ export function WhatIfAlternatives({ document, routineId, stepId }: Props) {
         onChange={setAxisId}
       />
       {/* The height of a whole table, so that nothing moves when it comes. */}
-      <div className="min-h-64" aria-busy={done?.set !== set}>
+      <div className="min-h-80" aria-busy={done?.set !== set}>
         {done?.set.subject && <Table axis={done.set.subject} outcomes={done.results} isOld={done.set !== set} />}
       </div>
     </>
@@ -69,7 +69,7 @@ function Table({ axis, outcomes, isOld }: TableProps) {
   return (
     <div className={isOld ? 'opacity-50' : ''}>
       <div className="overflow-x-auto" tabIndex={0} role="group" aria-label={`What if: ${title}`}>
-        <table className="w-full table-fixed border-collapse text-left tabular-nums max-sm:min-w-[34rem]">
+        <table className="w-full table-fixed border-collapse text-left tabular-nums max-sm:min-w-[44rem]">
           <thead>
             <tr className="border-b border-line align-bottom">
               <th scope="col" className="sticky left-0 w-28 bg-paper py-1.5 pr-3 text-small font-normal text-muted">
@@ -108,7 +108,7 @@ function MetricRow({ row, current }: { row: Row; current: number }) {
       </th>
       {row.cells.map(({ text, change }, index) => (
         <td key={index} className={`py-1.5 pr-3 ${index === current ? 'font-extrabold' : ''}`}>
-          {change ?? text}
+          <span className="text-[0.9375rem] whitespace-nowrap">{change ?? text}</span>
           {change !== null && <span className="block text-small text-muted">{text}</span>}
         </td>
       ))}
@@ -118,14 +118,16 @@ function MetricRow({ row, current }: { row: Row; current: number }) {
 
 function TakeRow({ axis, outcomes, isOld }: TableProps) {
   const store = useEditorStore();
-  const take = ({ label, change }: Alternative): void =>
+  const take = ({ label, change }: Alternative, button: HTMLElement): void => {
+    // The button goes away with what it offered.
+    button.closest<HTMLElement>('[role="group"]')?.focus();
     store.edit({ label: `what if: ${axis.word} ${label}`, change });
+  };
   return (
     <tr>
-      <th scope="row" className="sr-only">
-        Take a value
+      <th scope="row">
+        <span className="sr-only">Take a value</span>
       </th>
-      <td className="hidden" />
       {axis.alternatives.map((alternative, index) => (
         <td key={alternative.value} className="py-1 pr-3">
           {!alternative.isCurrent && outcomes[index]?.kind === 'figures' && (
@@ -134,7 +136,7 @@ function TakeRow({ axis, outcomes, isOld }: TableProps) {
               className="link min-h-9 text-small"
               disabled={isOld}
               aria-label={`Take it: ${axis.word} ${alternative.label}`}
-              onClick={() => take(alternative)}
+              onClick={(event) => take(alternative, event.currentTarget)}
             >
               take it
             </button>

@@ -35,7 +35,14 @@ describe('WhatIf', () => {
   test('tells duration, delivery, charge and life of each alternative', async () => {
     open();
     const group = await alternatives('Payload');
-    expect(rowsOf(group)).toEqual(['Mean duration', 'Delivered', 'Charge per cycle', 'Life', 'Take a value']);
+    expect(rowsOf(group)).toEqual([
+      'Mean duration',
+      'Delivered',
+      'Charge per cycle',
+      'Charge a day',
+      'Life',
+      'Take a value',
+    ]);
   });
 
   test('changes nothing by itself', async () => {

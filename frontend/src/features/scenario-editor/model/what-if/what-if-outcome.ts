@@ -15,6 +15,8 @@ export interface WhatIfFigures {
   exchangeC: number;
   /** Charge of one cycle of the routine, in excess of rest, C. */
   cycleC: number;
+  /** Charge of the routine in a mean day, in excess of rest, C. */
+  dayC: number;
 }
 
 /** How long the node lives; `lifeS` null: longer than the forecast looks. */
@@ -54,9 +56,10 @@ export function figuresOf(document: Scenario, { routineId, stepId }: WhatIfTarge
     const perCycle = entries.filter(({ chargePerCycleC }) => chargePerCycleC !== null);
     const sum = (rows: typeof entries): number =>
       rows.reduce((total, { chargePerCycleC }) => total + Number(chargePerCycleC), 0);
+    const dayC = perCycle.reduce((total, { chargeC }) => total + Number(chargeC), 0);
     const { meanS, deliveredProbability, payloadOctets } = result.plan;
     const exchangeC = sum(perCycle.filter((entry) => entry.stepId === stepId)) / (step.repeats ?? 1);
-    const figures = { meanS, deliveredProbability, payloadOctets, exchangeC, cycleC: sum(perCycle) };
+    const figures = { meanS, deliveredProbability, payloadOctets, exchangeC, cycleC: sum(perCycle), dayC };
     return { kind: 'figures', figures, life: null };
   });
 }

@@ -56,6 +56,13 @@ const METRICS: readonly Metric[] = [
     format: charge,
     formatChange: (difference, before) => signed(difference, charge, NEXT_TO_NOTHING * before),
   },
+  {
+    title: 'Charge a day',
+    // What happens once has no mean day.
+    read: ({ dayC }) => (dayC === 0 ? null : dayC),
+    format: charge,
+    formatChange: (difference, before) => signed(difference, charge, NEXT_TO_NOTHING * before),
+  },
 ];
 
 /** A life in years with two decimals, shorter ones in days. */

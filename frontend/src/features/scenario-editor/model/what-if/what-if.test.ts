@@ -160,12 +160,14 @@ describe('whatIfRows', () => {
   const outcomes = axis('interval').alternatives.map(({ change }) => outcomeOf(change(document), REPORT));
 
   it('tells the present figures bare and the others as changes', () => {
-    const changes = whatIfRows(outcomes, 2).map(({ title, cells }) => [title, ...cells.map(({ change }) => change)]);
+    const rows = whatIfRows(outcomes, 2);
+    const changes = rows.map(({ title, cells }) => [title, ...cells.map(({ change }) => change?.charAt(0) ?? null)]);
     expect(changes).toEqual([
-      ['Mean duration', 'same', 'same', null, 'same', 'same'],
-      ['Delivered', 'same', 'same', null, 'same', 'same'],
-      ['Charge per cycle', 'same', 'same', null, 'same', 'same'],
-      ['Life', 'same', 'same', null, 'same', 'same'],
+      ['Mean duration', 's', 's', null, 's', 's'],
+      ['Delivered', 's', 's', null, 's', 's'],
+      ['Charge per cycle', 's', 's', null, 's', 's'],
+      ['Charge a day', '+', '+', null, '\u2212', '\u2212'],
+      ['Life', 's', 's', null, 's', 's'],
     ]);
   });
 
