@@ -16,8 +16,9 @@ export interface EngineErrorDetails {
   move?: StateMove;
 }
 
-/** A change of state by their ids. */
+/** A change of state of a part, by their ids. */
 export interface StateMove {
+  partId: string;
   fromStateId: string;
   toStateId: string;
 }

@@ -21,7 +21,7 @@ export const problemSchema = z.strictObject({
     z.strictObject({
       path: z.string(),
       message: z.string(),
-      move: z.strictObject({ fromStateId: z.string(), toStateId: z.string() }).optional(),
+      move: z.strictObject({ partId: z.string(), fromStateId: z.string(), toStateId: z.string() }).optional(),
     }),
   ),
   /** With code `conflict`: what is stored now, so that nothing is lost. */

@@ -72,7 +72,7 @@ function reportNoPath(
     'no-path',
     field,
     `"${part.part.name}" has no transitions that lead from "${from.stateId}" to "${to.stateId}"; ${expected}.`,
-    { value: to.stateId, expected, move: { fromStateId: from.stateId, toStateId: to.stateId } },
+    { value: to.stateId, expected, move: { partId: part.part.id, fromStateId: from.stateId, toStateId: to.stateId } },
   );
 }
 

@@ -25,16 +25,16 @@ export interface MissingMove {
   links: MissingLink[];
 }
 
-const PATH = /^node\.routines\[(\d+)\]\.steps\[(\d+)\]\.states\.([\w-]+)$/;
+const PATH = /^node\.routines\[(\d+)\]\.steps\[(\d+)\]\./;
 
-/** What the engine's complaints about a step's states amount to: which moves lack a way, and what would give one. */
+/** What the engine's complaints about steps amount to: which moves lack a way, and what would give one. */
 export function missingMoves(scenario: Scenario, problems: readonly InputProblem[]): MissingMove[] {
   const found = new Map<string, MissingMove>();
   for (const { path, move } of problems) {
-    const [, routineIndex, stepIndex, partId] = PATH.exec(path) ?? [];
+    const [, routineIndex, stepIndex] = PATH.exec(path) ?? [];
     const routine = scenario.node.routines[Number(routineIndex)];
     const step = routine?.steps[Number(stepIndex)];
-    const index = scenario.node.parts.findIndex((part) => part.id === partId);
+    const index = scenario.node.parts.findIndex((part) => part.id === move?.partId);
     const part = scenario.node.parts[index];
     // The reference voltage does not matter to the way.
     const model = part && partModel(part, index, 3);
