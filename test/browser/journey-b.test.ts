@@ -118,7 +118,10 @@ describe.each([
       .locator('visible=true')
       .waitFor();
     expect(await answer(page)).toBe(before);
-    await offer.getByRole('button', { name: 'Go through Idle, crystal on: add Sleep to Idle, crystal on' }).click();
+    await offer
+      .getByRole('button', { name: /dd Sleep to Idle, crystal on$/ })
+      .first()
+      .click();
     await page
       .getByRole('region', { name: `Missing transition of ${RADIO}` })
       .first()
