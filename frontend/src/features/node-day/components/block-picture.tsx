@@ -16,7 +16,7 @@ export function BlockPicture({ block }: { block: Block }) {
   const current = formatCurrent(block.currentA);
   return (
     <div
-      className={`@container absolute bottom-1.5 h-10 overflow-hidden border-b-2 border-ink/70 ${TINT_CLASS[block.tint]}`}
+      className={`absolute bottom-1.5 h-10 overflow-hidden border-b-2 border-ink/70 ${TINT_CLASS[block.tint]}`}
       style={{
         left: `calc(${percent(block.from)} + 1px)`,
         width: `calc(${percent(block.to - block.from)} - 2px)`,
@@ -24,10 +24,20 @@ export function BlockPicture({ block }: { block: Block }) {
       }}
       title={`${block.name}, ${current}`}
     >
-      <span className="hidden flex-col overflow-hidden pt-1 pl-[0.1875rem] text-[0.6875rem] leading-[0.9375rem] whitespace-nowrap @min-[1.9rem]:flex">
-        <span>{block.name}</span>
-        <span className="tabular-nums">{current}</span>
+      <span className="block pt-1 text-[0.6875rem] leading-[0.9375rem] whitespace-nowrap">
+        <Line text={block.name} />
+        <Line text={current} />
       </span>
     </div>
+  );
+}
+
+/** A line that is there whole or not at all: beside the narrow first item, a text without room wraps out of sight. */
+function Line({ text }: { text: string }) {
+  return (
+    <span className="flex h-[0.9375rem] flex-wrap overflow-hidden">
+      <span className="h-full w-[0.1875rem]" />
+      <span className="tabular-nums">{text}</span>
+    </span>
   );
 }
