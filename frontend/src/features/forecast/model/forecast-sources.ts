@@ -32,7 +32,7 @@ export const openQuickest: OpenForecastSource = (onReply, onFailure): ForecastSo
       lastMs = reply.computeMs;
       onReply(reply);
     },
-    stop: worker.stop,
+    stop: () => worker.stop(),
   };
 };
 
