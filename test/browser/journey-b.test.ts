@@ -63,10 +63,14 @@ async function removeTransition(page: Page, part: string, from: string, to: stri
   await page.getByRole('button', { name: `Remove ${from} to ${to}` }).click();
 }
 
+/** What the two workspaces cannot tell apart is walked in the empty one alone; a long run walks everything in both. */
+const IS_LONG = process.env['LONG'] === '1';
+
 describe.each([
   { where: 'the demo workspace', start: startDemoWorld, project: DEMO_PROJECT },
   { where: 'an empty workspace', start: startEmptyWorld, project: PROJECT },
 ])('journey B in $where', ({ start, project }) => {
+  const isWhole = IS_LONG || project === PROJECT;
   let world: World;
   let page: Page;
 
@@ -79,28 +83,30 @@ describe.each([
     await world?.end();
   });
 
-  it('takes a routine "report" every 15 min and shows its lanes in the day of the node', async () => {
-    await openProject(page, project);
-    await makeScenario(page, 'Report', 'Empty');
-    await buildReportingNode(page);
-    await page.getByRole('heading', { name: 'report, every 15 min' }).waitFor();
-    await page.getByText('96 cycles a day').first().waitFor();
-    const steps = page.getByRole('toolbar', { name: 'Steps' }).getByRole('button');
-    expect((await steps.allInnerTexts()).map((text) => text.split('\n')[0])).toEqual([
-      'wake',
-      'sense',
-      'send',
-      'sleep',
-    ]);
-    const day = page.getByRole('region', { name: 'report, every 15 min' });
-    for (const text of [RADIO, CONTROLLER, SENSOR, 'Transmit at 3 dBm', 'Core running', 'Measuring']) {
-      await day.getByText(text, { exact: true }).locator('visible=true').first().waitFor();
-    }
-    await page.getByRole('group', { name: 'View of the day' }).getByText('one day', { exact: true }).click();
-    await page.getByText('every 15 min: 96 cycles a day').waitFor();
-    expect(await answer(page)).toMatch(/^Lives /);
-    expect(await save(page)).toMatch(/^revision 2, saved/);
-  });
+  if (isWhole) {
+    it('takes a routine "report" every 15 min and shows its lanes in the day of the node', async () => {
+      await openProject(page, project);
+      await makeScenario(page, 'Report', 'Empty');
+      await buildReportingNode(page);
+      await page.getByRole('heading', { name: 'report, every 15 min' }).waitFor();
+      await page.getByText('96 cycles a day').first().waitFor();
+      const steps = page.getByRole('toolbar', { name: 'Steps' }).getByRole('button');
+      expect((await steps.allInnerTexts()).map((text) => text.split('\n')[0])).toEqual([
+        'wake',
+        'sense',
+        'send',
+        'sleep',
+      ]);
+      const day = page.getByRole('region', { name: 'report, every 15 min' });
+      for (const text of [RADIO, CONTROLLER, SENSOR, 'Transmit at 3 dBm', 'Core running', 'Measuring']) {
+        await day.getByText(text, { exact: true }).locator('visible=true').first().waitFor();
+      }
+      await page.getByRole('group', { name: 'View of the day' }).getByText('one day', { exact: true }).click();
+      await page.getByText('every 15 min: 96 cycles a day').waitFor();
+      expect(await answer(page)).toMatch(/^Lives /);
+      expect(await save(page)).toMatch(/^revision 2, saved/);
+    });
+  }
 
   it('names the move that a forgotten transition makes impossible, and mends it with one click', async () => {
     if (project === DEMO_PROJECT) await openScenario(page, project, 'Two LR6, report every 15 min');

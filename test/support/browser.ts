@@ -109,19 +109,25 @@ export async function takePicture(page: Page, name: string, options: { fullPage?
 /**
  * What axe finds on the page as it stands, one line each: rule, element, how to mend it. Empty when all is well.
  *
- * @param rules only these; all that axe recommends when left out
+ * @param options only these rules (all that axe recommends when left out), and selectors of what is left out
  */
-export async function axeViolations(page: Page, rules?: string[]): Promise<string[]> {
+export async function axeViolations(
+  page: Page,
+  { rules, exclude = [] }: { rules?: string[] | undefined; exclude?: string[] } = {},
+): Promise<string[]> {
   if (!(await page.evaluate(() => 'axe' in window))) await page.evaluate(axe.source);
-  return page.evaluate(async (only) => {
-    const { violations } = await window.axe.run({
-      resultTypes: ['violations'],
-      ...(only === undefined ? {} : { runOnly: only }),
-    });
-    return violations.flatMap(({ id, nodes }) =>
-      nodes.map(({ target, failureSummary }) => `${id}: ${target.join(' ')}: ${failureSummary ?? ''}`),
-    );
-  }, rules);
+  return page.evaluate(
+    async ({ only, leftOut }) => {
+      const { violations } = await window.axe.run(
+        { exclude: leftOut.filter((selector) => document.querySelector(selector) !== null) },
+        { resultTypes: ['violations'], ...(only === undefined ? {} : { runOnly: only }) },
+      );
+      return violations.flatMap(({ id, nodes }) =>
+        nodes.map(({ target, failureSummary }) => `${id}: ${target.join(' ')}: ${failureSummary ?? ''}`),
+      );
+    },
+    { only: rules, leftOut: exclude },
+  );
 }
 
 declare global {
