@@ -3,6 +3,9 @@ import { defineConfig } from 'vitest/config';
 
 const needsPostgres = ['test/support/postgres-setup.ts'];
 
+/** Models of features know no DOM; those that need one say so in their first line. */
+const PURE_OF_PAGES = 'frontend/src/features/*/model/**/*.test.ts';
+
 export default defineConfig({
   test: {
     maxWorkers: Number(process.env['TEST_WORKERS'] ?? 2),
@@ -15,7 +18,7 @@ export default defineConfig({
         test: {
           name: 'unit',
           environment: 'node',
-          include: ['{common,backend}/src/**/*.test.ts', 'test/lint/**/*.test.ts'],
+          include: ['{common,backend}/src/**/*.test.ts', PURE_OF_PAGES, 'test/lint/**/*.test.ts'],
           testTimeout: 60_000,
           // Pure functions share a worker: loading them once per file took longer than testing them.
           isolate: false,
@@ -23,7 +26,13 @@ export default defineConfig({
       },
       {
         plugins: [react()],
-        test: { name: 'ui', environment: 'happy-dom', include: ['frontend/src/**/*.test.{ts,tsx}'] },
+        test: {
+          name: 'ui',
+          environment: 'happy-dom',
+          include: ['frontend/src/**/*.test.{ts,tsx}'],
+          exclude: [PURE_OF_PAGES],
+          isolate: false,
+        },
       },
       {
         test: {
@@ -52,6 +61,7 @@ export default defineConfig({
           environment: 'node',
           include: ['test/browser/**/*.test.ts'],
           globalSetup: [...needsPostgres, 'test/support/built-app-setup.ts'],
+          isolate: false,
           testTimeout: 120_000,
           hookTimeout: 120_000,
         },
