@@ -1,9 +1,12 @@
 import { EngineError } from '#common/errors.ts';
 import type { ExchangePhase, ExchangePlan } from '../link/exchange-plan.types.ts';
 import { stepDuration, stepPlan } from '../link/step-duration.ts';
-import type { ExchangeDuration, FrameLoading, LinkSettings, Step } from '../scenario/scenario.types.ts';
+import type { StepDuration } from '../link/step-duration.ts';
+import type { ExchangeDuration, LinkSettings, Step } from '../scenario/scenario.types.ts';
 import { checkNeeds } from './check-needs.ts';
 import { radioOf, radioState, remarkDoubleCounts } from './exchange-states.ts';
+import { withLoading } from './frame-loader.ts';
+import { lasting, wholeMicros } from './lasting.ts';
 import type { StepModel } from './layout.types.ts';
 import { toMicros } from './micros.ts';
 import type { NodeReport } from './node-report.ts';
@@ -59,17 +62,35 @@ interface Phased {
 type Own = Pick<StepModel, 'step' | 'path' | 'phase' | 'radioIndex' | 'suffix' | 'named'>;
 
 function wholeStep(context: StepContext, own: Own): StepModel {
-  const { meanS, termsS } = reported(context, { meanS: 0, termsS: [0], remarks: [] }, () =>
-    stepDuration(own.step, context.link, own.path),
-  );
+  const { meanS, termsS } = durationOf(context, own);
   const isTyped = own.step.duration.kind === 'fixed';
-  const durationUs = isTyped ? toMicros(meanS) : wholeMicros(meanS);
-  return { ...own, durationUs, durationS: meanS, termsS, worstS: meanS, longestS: meanS };
+  return modelOf(own, {
+    durationUs: isTyped ? toMicros(meanS) : wholeMicros(meanS),
+    durationS: meanS,
+    termsS,
+    worstS: meanS,
+    longestS: meanS,
+  });
 }
 
-/** Rounded half up. Durations are no negative numbers. */
-function wholeMicros(timeS: number): number {
-  return Math.round(timeS * 1e6);
+const NO_TIME = { meanS: 0, termsS: [0] };
+
+function durationOf({ link, report }: StepContext, { step, path }: Own): Pick<StepDuration, 'meanS' | 'termsS'> {
+  try {
+    return stepDuration(step, link, path);
+  } catch (error) {
+    if (!(error instanceof EngineError)) throw error;
+    report.add(error);
+    return NO_TIME;
+  }
+}
+
+/** Field by field: a spread here took a sixth of a forecast. */
+function modelOf(
+  { step, path, phase, radioIndex, suffix, named }: Own,
+  { durationUs, durationS, termsS, worstS, longestS }: Omit<StepModel, keyof Own>,
+): StepModel {
+  return { step, path, phase, radioIndex, suffix, named, durationUs, durationS, termsS, worstS, longestS };
 }
 
 /** Runs a computation whose errors are the input's; they are collected, and a stand-in goes on. */
@@ -86,7 +107,7 @@ function reported<T>({ report }: StepContext, standIn: T, compute: () => T): T {
 function exchangeModels(context: StepContext, own: Own, exchange: ExchangeDuration): StepModel[] {
   const { path } = own;
   const found = reported(context, null, () => stepPlan(exchange, { nodeLink: context.link, path }));
-  if (found === null) return [{ ...own, durationUs: 0, durationS: 0, termsS: [0], worstS: 0, longestS: 0 }];
+  if (found === null) return [modelOf(own, { durationUs: 0, durationS: 0, termsS: [0], worstS: 0, longestS: 0 })];
   const { plan, remarks } = found;
   if (context.isEnabled) for (const remark of remarks) context.report.remark(remark);
   noteOnAir(context, own, { exchange, plan });
@@ -117,7 +138,13 @@ function wholeExchange(own: Own, plan: ExchangePlan): StepModel {
   const { repeats = 1 } = own.step;
   const durationS = plan.meanS * repeats;
   const worstS = Math.max(durationS, plan.worstS * repeats);
-  return { ...own, durationUs: wholeMicros(durationS), durationS, termsS: [durationS], worstS, longestS: worstS };
+  return modelOf(own, {
+    durationUs: wholeMicros(durationS),
+    durationS,
+    termsS: [durationS],
+    worstS,
+    longestS: worstS,
+  });
 }
 
 function phaseModels(context: StepContext, own: Own, phased: Phased): StepModel[] {
@@ -154,55 +181,6 @@ function phaseModel(
     worstS: Math.max(meanS, worstS),
     longestS,
   };
-}
-
-/** The part that loads the frame is in a state of its own meanwhile: before the exchange, or beside the beginning of the frame. */
-function withLoading(
-  context: StepContext,
-  models: StepModel[],
-  { loading, plan }: { loading: FrameLoading; plan: ExchangePlan },
-): StepModel[] {
-  const loader = loaderOf(context, models, loading);
-  if (!loader) return models;
-  const besideS = plan.figures.find(({ id }) => id === 'loading-beside')?.value ?? 0;
-  return models.flatMap((model): StepModel[] => {
-    const named = [...model.named];
-    named[loader.part.index] = loader.state;
-    if (model.phase?.id === 'loading') return [{ ...model, named }];
-    if (model.phase?.id !== 'frame' || besideS === 0) return [model];
-    if (besideS >= model.durationS) return [{ ...model, named }];
-    const restS = model.durationS - besideS;
-    const worstS = Math.max(restS, model.worstS - besideS);
-    return [
-      { ...model, named, ...lasting(besideS), suffix: `${model.suffix}/loading` },
-      { ...model, ...lasting(restS), worstS, longestS: Math.max(restS, model.longestS - besideS) },
-    ];
-  });
-}
-
-function loaderOf(
-  { parts, report }: StepContext,
-  models: readonly StepModel[],
-  { partId, stateId }: FrameLoading,
-): { part: PartModel; state: StateModel } | null {
-  const part = parts.find((candidate) => candidate.part.id === partId);
-  const state = part?.stateById.get(stateId);
-  if (part && state) return { part, state };
-  const field = `${models[0]?.path ?? ''}.duration.loading.${part ? 'stateId' : 'partId'}`;
-  const known = part ? part.states.map((one) => one.stateId) : parts.map((one) => one.part.id);
-  const expected = `one of ${known.join(', ')}`;
-  const message = part
-    ? `The part "${partId}", which loads the frame, has no state "${stateId}"; it has ${expected}.`
-    : `There is no part "${partId}" that could load the frame; the node has ${expected}.`;
-  report.inconsistent(part ? 'unknown-state' : 'unknown-part', field, message, {
-    value: part ? stateId : partId,
-    expected,
-  });
-  return null;
-}
-
-function lasting(durationS: number): Pick<StepModel, 'durationUs' | 'durationS' | 'termsS' | 'worstS' | 'longestS'> {
-  return { durationUs: wholeMicros(durationS), durationS, termsS: [durationS], worstS: durationS, longestS: durationS };
 }
 
 function repeated({ report, isEnabled }: StepContext, models: StepModel[]): StepModel[] {
