@@ -31,6 +31,7 @@ export default defineConfig({
           environment: 'happy-dom',
           include: ['frontend/src/**/*.test.{ts,tsx}'],
           exclude: [PURE_OF_PAGES],
+          setupFiles: ['test/support/ui-setup.ts'],
           isolate: false,
         },
       },
