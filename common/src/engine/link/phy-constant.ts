@@ -1,5 +1,16 @@
 import { InconsistentInputError } from '#common/errors.ts';
+import type { PhyConstants } from '../scenario/scenario.types.ts';
 import type { Phy } from './phy.types.ts';
+
+/** Constants of a PHY that the link settings can give. */
+export const PHY_CONSTANTS: readonly (keyof PhyConstants)[] = [
+  'shrOctets',
+  'phrOctets',
+  'turnaroundS',
+  'ccaS',
+  'unitBackoffS',
+  'ackWaitS',
+];
 
 /** Constants that a PHY may leave unknown, and the unit of each. */
 const UNITS = {

@@ -5,6 +5,7 @@ import { requireNumber } from './checks.ts';
 import type { ExchangeFigure, PlanCaution } from './exchange-plan.types.ts';
 import { linkDefaults } from './link-defaults.table.ts';
 import type { LinkDefault, LinkDefaultId } from './link-defaults.table.ts';
+import { PHY_CONSTANTS } from './phy-constant.ts';
 import { phyOf } from './phy-of.ts';
 import type { Phy } from './phy.types.ts';
 
@@ -41,12 +42,9 @@ export function planPhy(link: LinkSettings): Phy {
 function withConstants(phy: Phy, given: PhyConstants | undefined): Phy {
   if (given === undefined) return phy;
   const sources = { ...phy.sources };
-  for (const name of Object.keys(given)) if (isConstant(name)) sources[name] = 'given in the scenario';
+  for (const name of PHY_CONSTANTS) if (given[name] !== undefined) sources[name] = 'given in the scenario';
   return { ...phy, ...given, sources };
 }
-
-const isConstant = (name: string): name is keyof PhyConstants =>
-  ['shrOctets', 'phrOctets', 'turnaroundS', 'ccaS', 'unitBackoffS', 'ackWaitS'].includes(name);
 
 const assumedWords = ({ value, words, source }: LinkDefault): string =>
   `Nothing says how likely it is ${words}: ${formatShare(value)} is assumed (${source}).`;

@@ -7,6 +7,7 @@ import { exchangePlan } from './exchange-plan.ts';
 import type { ExchangePlan } from './exchange-plan.types.ts';
 import { linkOf } from './link-of.ts';
 import { serialTransferS } from './serial-transfer.ts';
+import { PHY_CONSTANTS } from './phy-constant.ts';
 
 /** How long a step takes. */
 export interface StepDuration {
@@ -32,7 +33,7 @@ const LINK_FIELDS = new Set(
     .split(','),
 );
 /** Constants that a PHY leaves open are given beside it, the spaces by another PHY. */
-const CONSTANT_FIELDS = new Set('shrOctets,phrOctets,turnaroundS,ccaS,unitBackoffS,ackWaitS'.split(','));
+const CONSTANT_FIELDS = new Set<string>(PHY_CONSTANTS);
 const PHY_FIELDS = new Set(['sifsS', 'lifsS']);
 
 /**
