@@ -1,14 +1,12 @@
-import { Chart, LinearScale, LineController, LineElement, PointElement } from 'chart.js';
-import { useEffect, useRef, type KeyboardEvent, type PointerEvent } from 'react';
+import { useMemo, type KeyboardEvent, type PointerEvent } from 'react';
 import type { DekadPoint } from '#common/engine/index.ts';
-import { readChartTheme } from '#frontend/components/chart/chart-theme.ts';
-import { useThemeKey } from '#frontend/hooks/use-theme-key.ts';
-import { chartConfig, refreshChart, type ChartContent } from '../model/chart-config.ts';
+import { pointAfterKey } from '#frontend/components/chart/point-keys.ts';
+import { useChartCanvas } from '#frontend/components/chart/use-chart-canvas.ts';
+import { chartConfig, refreshChart } from '../model/chart-config.ts';
 import { dekadInWords, valuesInWords, type CurvePicture, type TimeAxis } from '../model/curves.ts';
 
-Chart.register(LinearScale, LineController, LineElement, PointElement);
-
 const DEKADS_PER_YEAR = 36;
+const CURVES = { make: chartConfig, refresh: refreshChart };
 
 interface Props {
   picture: CurvePicture;
@@ -21,37 +19,11 @@ interface Props {
 
 /** One chart; pointer and arrow keys read out its values at a dekad. */
 export function CurveChart({ picture, time, dekads, pointed, onPoint }: Props) {
-  const canvas = useRef<HTMLCanvasElement>(null);
-  const chart = useRef<Chart<'line', { x: number; y: number }[]> | null>(null);
-  const content = useRef<ChartContent>({ picture, time, pointed });
-  const themeKey = useThemeKey();
+  const data = useMemo(() => ({ picture, time }), [picture, time]);
+  const { canvas, chart } = useChartCanvas(CURVES, data, pointed);
   const last = dekads.length - 1;
   const shown = Math.min(pointed ?? last, last);
   const dekad = dekads[shown];
-
-  useEffect(() => {
-    if (!canvas.current?.getContext('2d')) return undefined;
-    const made = new Chart(canvas.current, chartConfig(content.current, readChartTheme(canvas.current)));
-    chart.current = made;
-    // A canvas does not wait for web fonts.
-    void document.fonts?.ready.then(() => {
-      if (chart.current === made) made.update('none');
-    });
-    return () => {
-      chart.current = null;
-      made.destroy();
-    };
-  }, [themeKey]);
-
-  useEffect(() => {
-    Object.assign(content.current, { picture, time });
-    if (chart.current) refreshChart(chart.current, content.current);
-  }, [picture, time]);
-
-  useEffect(() => {
-    content.current.pointed = pointed;
-    chart.current?.draw();
-  }, [pointed]);
 
   const handlePointer = (event: PointerEvent): void => {
     const scale = chart.current?.scales['x'];
@@ -60,7 +32,7 @@ export function CurveChart({ picture, time, dekads, pointed, onPoint }: Props) {
     onPoint(nearest(time.values, scale.getValueForPixel(event.clientX - box.left) ?? 0));
   };
   const handleKey = (event: KeyboardEvent): void => {
-    const next = keyTarget(event.key, shown, last);
+    const next = pointAfterKey(event.key, { from: shown, last, page: DEKADS_PER_YEAR });
     if (next === null) return;
     event.preventDefault();
     onPoint(next);
@@ -105,19 +77,4 @@ function nearest(values: readonly number[], wanted: number): number {
     else high = middle;
   }
   return low;
-}
-
-function keyTarget(key: string, from: number, last: number): number | null {
-  const targets: Record<string, number> = {
-    ArrowRight: from + 1,
-    ArrowUp: from + 1,
-    ArrowLeft: from - 1,
-    ArrowDown: from - 1,
-    PageUp: from + DEKADS_PER_YEAR,
-    PageDown: from - DEKADS_PER_YEAR,
-    Home: 0,
-    End: last,
-  };
-  const next = targets[key];
-  return next === undefined ? null : Math.max(0, Math.min(last, next));
 }

@@ -1,16 +1,13 @@
-import { Chart, LinearScale, LineController, LineElement, PointElement } from 'chart.js';
-import { useEffect, useRef, useState, type KeyboardEvent, type PointerEvent } from 'react';
-import { readChartTheme } from '#frontend/components/chart/chart-theme.ts';
-import { useThemeKey } from '#frontend/hooks/use-theme-key.ts';
+import { useMemo, useState, type KeyboardEvent, type PointerEvent } from 'react';
+import { pointAfterKey } from '#frontend/components/chart/point-keys.ts';
+import { useChartCanvas } from '#frontend/components/chart/use-chart-canvas.ts';
 import {
   pointChartConfig,
   refreshPointChart,
-  type PointChart,
-  type PointContent,
 } from '#frontend/features/scenario-editor/model/what-if/what-if-chart-config.ts';
 import { deliveredWords, type ChartPoints } from '#frontend/features/scenario-editor/model/what-if/what-if-charts.ts';
 
-Chart.register(LinearScale, LineController, LineElement, PointElement);
+const POINTS = { make: pointChartConfig, refresh: refreshPointChart };
 
 /** One small chart; pointer and arrow keys read out its points. */
 export function WhatIfChart({ chart: points }: { chart: ChartPoints }) {
@@ -22,7 +19,7 @@ export function WhatIfChart({ chart: points }: { chart: ChartPoints }) {
   const words = wordsOf(points, shown);
   const handlePointer = (event: PointerEvent): void => setPointed(indexAt(event.clientX));
   const handleKey = (event: KeyboardEvent): void => {
-    const next = keyTarget(event.key, shown, last);
+    const next = pointAfterKey(event.key, { from: shown, last });
     if (next === null) return;
     event.preventDefault();
     setPointed(next);
@@ -56,29 +53,10 @@ export function WhatIfChart({ chart: points }: { chart: ChartPoints }) {
   );
 }
 
-/** The chart on its canvas, made anew for another theme only. */
+/** The chart on its canvas, and which point lies nearest to a place on it. */
 function useChart(points: ChartPoints, pointed: number | null) {
-  const canvas = useRef<HTMLCanvasElement>(null);
-  const chart = useRef<PointChart | null>(null);
-  const content = useRef<PointContent>({ chart: points, pointed });
-  const themeKey = useThemeKey();
-  useEffect(() => {
-    if (!canvas.current?.getContext('2d')) return undefined;
-    const made = new Chart(canvas.current, pointChartConfig(content.current, readChartTheme(canvas.current)));
-    chart.current = made;
-    return () => {
-      chart.current = null;
-      made.destroy();
-    };
-  }, [themeKey]);
-  useEffect(() => {
-    content.current.chart = points;
-    if (chart.current) refreshPointChart(chart.current, content.current);
-  }, [points]);
-  useEffect(() => {
-    content.current.pointed = pointed;
-    chart.current?.draw();
-  }, [pointed]);
+  const data = useMemo(() => ({ chart: points }), [points]);
+  const { canvas, chart } = useChartCanvas(POINTS, data, pointed);
   const indexAt = (clientX: number): number | null => {
     const left = canvas.current?.getBoundingClientRect().left;
     if (!chart.current || left === undefined) return null;
@@ -93,17 +71,4 @@ function wordsOf({ plan, points, current }: ChartPoints, index: number): string 
   if (!point) return 'no point yet';
   const told = [plan.tellY(point.y), deliveredWords(point)].filter((words) => words !== null).join(', ');
   return `${index === current ? 'now, ' : ''}${plan.tellX(point.x)}: ${told}`;
-}
-
-function keyTarget(key: string, from: number, last: number): number | null {
-  const targets: Record<string, number> = {
-    ArrowRight: from + 1,
-    ArrowUp: from + 1,
-    ArrowLeft: from - 1,
-    ArrowDown: from - 1,
-    Home: 0,
-    End: last,
-  };
-  const next = targets[key];
-  return next === undefined ? null : Math.max(0, Math.min(last, next));
 }
