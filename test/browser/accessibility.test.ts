@@ -4,16 +4,16 @@ import { axeViolations, SCREENS } from '#test/support/browser.ts';
 import { DEMO_PROJECT, PASSWORD, startDemoWorld, type World } from '#test/support/journey-world.ts';
 import { boxesOf, overflowPx, tabTo } from '#test/support/pages-boxes.ts';
 import { answer, field, openProject, openScenario, savedState } from '#test/support/pages-scenario.ts';
+import { IS_LONG } from '#test/support/long.ts';
 
 const SCENARIO = 'Two LR6, report every 15 min';
 const EVERY_LOOK = (['phone', 'laptop'] as const).flatMap((screen) =>
   (['light', 'dark'] as const).map((colorScheme) => ({ screen, colorScheme })),
 );
 /** Each width and each scheme once; a long run looks at every pair. */
-const LOOKS =
-  process.env['LONG'] === '1'
-    ? EVERY_LOOK
-    : EVERY_LOOK.filter(({ screen, colorScheme }) => (screen === 'phone') === (colorScheme === 'light'));
+const LOOKS = IS_LONG
+  ? EVERY_LOOK
+  : EVERY_LOOK.filter(({ screen, colorScheme }) => (screen === 'phone') === (colorScheme === 'light'));
 
 let world: World;
 beforeAll(async () => {
@@ -23,7 +23,7 @@ afterAll(async () => {
   await world?.end();
 });
 
-const WIDTHS = process.env['LONG'] === '1' ? (['phone', 'laptop', 'desk'] as const) : (['phone', 'desk'] as const);
+const WIDTHS = IS_LONG ? (['phone', 'laptop', 'desk'] as const) : (['phone', 'desk'] as const);
 
 /** The same beside every tab of a scenario, and looked at there once. */
 const BESIDE_TABS = ['section[aria-labelledby="forecast-heading"]', 'section[aria-labelledby="details-heading"]'];

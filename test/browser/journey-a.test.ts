@@ -15,16 +15,15 @@ import {
   type,
 } from '#test/support/pages-scenario.ts';
 import { signIn } from '#test/support/pages-session.ts';
+import { IS_LONG } from '#test/support/long.ts';
 
 const PROJECT = 'Hedge node';
-
-/** What the two workspaces cannot tell apart is walked in the empty one alone; a long run walks everything in both. */
-const IS_LONG = process.env['LONG'] === '1';
 
 describe.each([
   { where: 'the demo workspace', start: startDemoWorld, reach: (page: Page) => openProject(page, DEMO_PROJECT) },
   { where: 'an empty workspace', start: startEmptyWorld, reach: (page: Page) => openProject(page, PROJECT) },
 ])('journey A in $where', ({ where, start, reach }) => {
+  // What the two workspaces cannot tell apart is walked in the empty one alone; a long run walks everything in both.
   const isWhole = IS_LONG || where === 'an empty workspace';
   let world: World;
   let page: Page;

@@ -13,6 +13,7 @@ import {
   save,
   type,
 } from '#test/support/pages-scenario.ts';
+import { IS_LONG } from '#test/support/long.ts';
 
 const PROJECT = 'Hedge node';
 const RADIO = 'Transceiver 2.4 GHz, IEEE 802.15.4';
@@ -63,13 +64,11 @@ async function removeTransition(page: Page, part: string, from: string, to: stri
   await page.getByRole('button', { name: `Remove ${from} to ${to}` }).click();
 }
 
-/** What the two workspaces cannot tell apart is walked in the empty one alone; a long run walks everything in both. */
-const IS_LONG = process.env['LONG'] === '1';
-
 describe.each([
   { where: 'the demo workspace', start: startDemoWorld, project: DEMO_PROJECT },
   { where: 'an empty workspace', start: startEmptyWorld, project: PROJECT },
 ])('journey B in $where', ({ start, project }) => {
+  // What the two workspaces cannot tell apart is walked in the empty one alone; a long run walks everything in both.
   const isWhole = IS_LONG || project === PROJECT;
   let world: World;
   let page: Page;

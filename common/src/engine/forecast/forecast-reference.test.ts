@@ -3,8 +3,9 @@ import { expect, test } from 'vitest';
 import { forecast } from '#common/engine/index.ts';
 import { referenceLife } from '#test/support/ode-reference.ts';
 import { variedScenario } from '#test/support/varied-scenario.ts';
+import { IS_LONG } from '#test/support/long.ts';
 
-const COUNT = process.env['LONG'] === '1' ? 600 : 60;
+const COUNT = IS_LONG ? 600 : 60;
 /** Relative agreement of lives that the mean-current level promises. */
 const AGREEMENT = 1e-4;
 

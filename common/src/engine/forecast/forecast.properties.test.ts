@@ -3,10 +3,11 @@ import { expect, test } from 'vitest';
 import { forecast } from '#common/engine/index.ts';
 import type { Forecast, Quantity, Scenario } from '#common/engine/index.ts';
 import { variedScenario } from '#test/support/varied-scenario.ts';
+import { IS_LONG } from '#test/support/long.ts';
 
 const YEAR_S = 31_557_600;
 const HORIZON_S = 40 * YEAR_S;
-const RUNS = process.env['LONG'] === '1' ? 1_000 : 100;
+const RUNS = IS_LONG ? 1_000 : 100;
 const runs = { numRuns: RUNS, seed: 7 };
 
 const fast = (scenario: Scenario): Forecast => forecast(scenario, { withLedger: false });

@@ -6,8 +6,9 @@ import type { Node, Step } from '../scenario/scenario.types.ts';
 import type { Ledger } from '../forecast/forecast.types.ts';
 import { chargeLedger } from './charge-ledger.ts';
 import { compileNode } from './compile-node.ts';
+import { IS_LONG } from '#test/support/long.ts';
 
-const RUNS = process.env['LONG'] === '1' ? 2_000 : 100;
+const RUNS = IS_LONG ? 2_000 : 100;
 /** A reader's own decimals, as the model fixes them: 40 significant digits. */
 const Forty = Decimal.clone({ precision: 40 });
 

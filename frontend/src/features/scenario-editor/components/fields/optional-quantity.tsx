@@ -4,6 +4,7 @@ import type { ParseOptions } from '#common/units/parse-quantity.ts';
 import { orderProblem, typicalOrNew, withSide } from '#frontend/features/scenario-editor/model/quantity-sides.ts';
 import { FigureField } from './bound-fields.tsx';
 import { ProvenanceMark } from './provenance-mark.tsx';
+import { RangeToggle } from './range-toggle.tsx';
 
 interface Props {
   field: string;
@@ -57,17 +58,7 @@ export function OptionalQuantity({
               quantity={quantity}
               change={(document, update) => change(document, (before) => before && update(before))}
             />
-            {!hasRange && (
-              <button
-                type="button"
-                aria-expanded={isOpen}
-                aria-label={`Range of ${label}`}
-                onClick={() => setOpen(!isOpen)}
-                className="rounded-sm px-1 py-0.5 text-small whitespace-nowrap text-muted hover:text-ink"
-              >
-                {isOpen ? 'no range' : '± range'}
-              </button>
-            )}
+            {!hasRange && <RangeToggle label={label} isOpen={isOpen} onToggle={() => setOpen(!isOpen)} />}
           </>
         )}
         {children}

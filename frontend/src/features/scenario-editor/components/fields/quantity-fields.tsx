@@ -5,6 +5,7 @@ import { orderProblem, withSide, type Side } from '#frontend/features/scenario-e
 import { GridCell } from '../grid/edit-grid.tsx';
 import { FigureField } from './bound-fields.tsx';
 import { ProvenanceMark, type ChangeQuantity } from './provenance-mark.tsx';
+import { RangeToggle } from './range-toggle.tsx';
 
 export interface QuantityProps {
   field: string;
@@ -86,17 +87,7 @@ export function QuantityField(props: QuantityProps & { title: string; hint?: str
           {...(hint === undefined ? {} : { hint })}
         >
           <ProvenanceMark label={label} quantity={quantity} change={change} />
-          {!hasRange && (
-            <button
-              type="button"
-              aria-expanded={isOpen}
-              aria-label={`Range of ${label}`}
-              onClick={() => setOpen(!isOpen)}
-              className="rounded-sm px-1 py-0.5 text-small whitespace-nowrap text-muted hover:text-ink"
-            >
-              {isOpen ? 'no range' : '± range'}
-            </button>
-          )}
+          {!hasRange && <RangeToggle label={label} isOpen={isOpen} onToggle={() => setOpen(!isOpen)} />}
         </FigureField>
       </div>
       {isRangeShown &&
